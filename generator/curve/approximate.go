@@ -1,0 +1,93 @@
+package curve
+
+import (
+	"errors"
+	"fmt"
+	"math"
+)
+
+// Approximate lowers a smooth function to cubic segments: value and slope agree
+// at every knot, and between knots the curve stays within relative times the
+// magnitude of f. f is the function, df its derivative, both of kelvin; lo < hi.
+// An interval is halved until cubic and function agree at seven points inside
+// it, with a factor of two in hand. It fails when f or df is not finite, or when
+// halving does not help: f then has a step or a kink inside, or is zero there.
+func Approximate(f, df func(float64) float64, lo, hi, relative float64) (Curve, error) {
+	if !(lo < hi) || finite(lo) == 0 || finite(hi) == 0 {
+		return Curve{}, fmt.Errorf("cannot lower a function from %s to %s", celsius(lo), celsius(hi))
+	}
+	l := lowering{f: f, df: df, relative: 0.5 * relative}
+	if err := l.halve(knot{lo, f(lo), df(lo)}, knot{hi, f(hi), df(hi)}, 0); err != nil {
+		return Curve{}, err
+	}
+	return Curve{Segments: l.segments}, nil
+}
+
+// lowering is one run of Approximate.
+type lowering struct {
+	f, df    func(float64) float64
+	relative float64
+	segments []Segment
+}
+
+type knot struct{ t, y, slope float64 }
+
+// deepest is the number of halvings after which Approximate gives up: a
+// thousandth of a kelvin out of a thousand.
+const deepest = 20
+
+var errNotSmooth = errors.New("the function is not smooth enough to be lowered to cubics")
+
+// halve appends the segments from a to b.
+func (l *lowering) halve(a, b knot, depth int) error {
+	for _, k := range []knot{a, b} {
+		if finite(k.y) == 0 || finite(k.slope) == 0 {
+			return fmt.Errorf("the function is not finite at %s", celsius(k.t))
+		}
+	}
+	s := hermite(a.t, b.t, a.y, b.y, a.slope, b.slope)
+	if l.fits(&s) {
+		l.segments = append(l.segments, s)
+		return nil
+	}
+	if depth == deepest {
+		return fmt.Errorf("near %s: %w", celsius(a.t), errNotSmooth)
+	}
+	t := 0.5 * (a.t + b.t)
+	mid := knot{t, l.f(t), l.df(t)}
+	if err := l.halve(a, mid, depth+1); err != nil {
+		return err
+	}
+	return l.halve(mid, b, depth+1)
+}
+
+// fits compares segment and function at the eighths of the interval. Rounding
+// of the function itself is no reason to halve.
+func (l *lowering) fits(s *Segment) bool {
+	for i := 1; i < 8; i++ {
+		t := s.From + float64(float64(i)/8*(s.To-s.From))
+		y := l.f(t)
+		rounding := 16 * epsilon * s.magnitude()
+		if !(math.Abs(s.value(t)-y) <= float64(l.relative*math.Abs(y))+rounding) {
+			return false
+		}
+	}
+	return true
+}
+
+// approximateEach lowers f segment by segment of c, so that a kink of c between
+// two segments stays a knot. f and df receive the segment and the temperature.
+func (c Curve) approximateEach(f, df func(*Segment, float64) float64, relative float64) (Curve, error) {
+	out := Curve{FromTable: c.FromTable}
+	for i := range c.Segments {
+		s := &c.Segments[i]
+		part, err := Approximate(
+			func(t float64) float64 { return f(s, t) },
+			func(t float64) float64 { return df(s, t) }, s.From, s.To, relative)
+		if err != nil {
+			return Curve{}, err
+		}
+		out.Segments = append(out.Segments, part.Segments...)
+	}
+	return out, nil
+}
