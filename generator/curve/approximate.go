@@ -81,6 +81,11 @@ func (c Curve) approximateEach(f, df func(*Segment, float64) float64, relative f
 	out := Curve{FromTable: c.FromTable}
 	for i := range c.Segments {
 		s := &c.Segments[i]
+		if s.From == s.To { // a curve of one temperature
+			point := Segment{From: s.From, To: s.To, Centre: s.To, C: [4]float64{f(s, s.To), df(s, s.To)}}
+			out.Segments = append(out.Segments, point)
+			continue
+		}
 		part, err := Approximate(
 			func(t float64) float64 { return f(s, t) },
 			func(t float64) float64 { return df(s, t) }, s.From, s.To, relative)

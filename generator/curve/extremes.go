@@ -128,7 +128,7 @@ func (s *Segment) direction(a, b float64) int {
 }
 
 // turningEnds adds the turning points that stand at the very ends of the range,
-// within the slack.
+// where the stretch beside them is too narrow to have been seen.
 func (c Curve) turningEnds(found []TurningPoint) []TurningPoint {
 	first, last := &c.Segments[0], &c.Segments[len(c.Segments)-1]
 	if p, ok := first.turnsAt(first.From); ok && (len(found) == 0 || found[0].T > p.T+narrow) {
@@ -143,11 +143,11 @@ func (c Curve) turningEnds(found []TurningPoint) []TurningPoint {
 	return found
 }
 
-// turnsAt tells whether the slope of s changes sign at t, within the slack.
+// turnsAt tells whether the slope of s changes sign at t, within narrow.
 func (s *Segment) turnsAt(t float64) (TurningPoint, bool) {
 	roots, n := s.stationary()
 	for _, x := range roots[:n] {
-		if math.Abs(x-t) <= slack {
+		if math.Abs(x-t) <= narrow {
 			return TurningPoint{t, s.bend(x) < 0}, true
 		}
 	}

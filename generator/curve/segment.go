@@ -60,7 +60,7 @@ func hermite(a, b, ya, yb, da, db float64) Segment {
 	return Segment{From: a, To: b, Centre: b, C: [4]float64{
 		yb,
 		db,
-		(2*db + da - 3*secant) / h,
+		(2*db + da - float64(3*secant)) / h,
 		(da + db - 2*secant) / float64(h*h),
 	}}
 }

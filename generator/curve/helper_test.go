@@ -1,0 +1,87 @@
+package curve
+
+import (
+	"encoding/csv"
+	"math"
+	"os"
+	"strconv"
+	"testing"
+)
+
+// c puts degrees Celsius into kelvin.
+func c(t float64) float64 { return t + zeroCelsius }
+
+// near fails unless got is within tolerance of want.
+func near(t *testing.T, what string, got, want, tolerance float64) {
+	t.Helper()
+	if !(math.Abs(got-want) <= tolerance) {
+		t.Errorf("%s: got %.12g, want %.12g ± %.3g", what, got, want, tolerance)
+	}
+}
+
+// at gives the value of a curve that must tell it.
+func at(t *testing.T, curve Curve, kelvin float64) float64 {
+	t.Helper()
+	v, ok := curve.At(kelvin)
+	if !ok {
+		t.Fatalf("no value at %s", celsius(kelvin))
+	}
+	return v
+}
+
+// must gives the curve of a lowering that may not fail.
+func must(t *testing.T) func(Curve, error) Curve {
+	return func(curve Curve, err error) Curve {
+		t.Helper()
+		if err != nil {
+			t.Fatal(err)
+		}
+		return curve
+	}
+}
+
+// rows reads a table of testdata, each row by the names of its header.
+func rows(t *testing.T, file string) []map[string]string {
+	t.Helper()
+	f, err := os.Open("testdata/" + file)
+	if err != nil {
+		t.Fatal(err)
+	}
+	defer f.Close()
+	all, err := csv.NewReader(f).ReadAll()
+	if err != nil {
+		t.Fatal(err)
+	}
+	var out []map[string]string
+	for _, line := range all[1:] {
+		row := map[string]string{}
+		for i, cell := range line {
+			row[all[0][i]] = cell
+		}
+		out = append(out, row)
+	}
+	return out
+}
+
+func number(t *testing.T, text string) float64 {
+	t.Helper()
+	v, err := strconv.ParseFloat(text, 64)
+	if err != nil {
+		t.Fatal(err)
+	}
+	return v
+}
+
+// halfUnit is half a unit of the last digit printed in text.
+func halfUnit(text string) float64 {
+	for i := range text {
+		if text[i] == '.' {
+			return 0.5 * math.Pow(10, -float64(len(text)-i-1))
+		}
+	}
+	return 0.5
+}
+
+// worked is the parabola of the worked check numbers: α +10 ppm/K, β −0.5 ppm/K²
+// about 20 °C, computed by hand from the formula.
+var worked = Polynomial{Y0: 1, Alpha: 10e-6, Beta: -0.5e-6, Reference: c(20)}
