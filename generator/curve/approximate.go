@@ -9,6 +9,8 @@ import (
 // Approximate lowers a smooth function to cubic segments: value and slope agree
 // at every knot, and between knots the curve stays within relative times the
 // magnitude of f. f is the function, df its derivative, both of kelvin; lo < hi.
+// Where f is so flat that the cubic would turn though f does not, slopes give
+// way to shape: a dip within the tolerance would still be a turning point.
 // An interval is halved until cubic and function agree at seven points inside
 // it, with a factor of two in hand. It fails when f or df is not finite, or when
 // halving does not help: f then has a step or a kink inside, or is zero there.
@@ -46,6 +48,9 @@ func (l *lowering) halve(a, b knot, depth int) error {
 		}
 	}
 	s := hermite(a.t, b.t, a.y, b.y, a.slope, b.slope)
+	if monotone, ok := unturned(a, b); ok {
+		s = monotone
+	}
 	if l.fits(&s) {
 		l.segments = append(l.segments, s)
 		return nil
@@ -59,6 +64,23 @@ func (l *lowering) halve(a, b knot, depth int) error {
 		return err
 	}
 	return l.halve(mid, b, depth+1)
+}
+
+// unturned gives the cubic from a to b with slopes of at most three times the
+// secant, which is enough to keep it from turning. ok is false when no slope
+// exceeds that, or when a slope's sign shows that the function itself turns.
+//
+// Source: F. N. Fritsch, R. E. Carlson, SIAM J. Numer. Anal. 17 (1980) 238.
+func unturned(a, b knot) (s Segment, ok bool) {
+	most := 3 * (b.y - a.y) / (b.t - a.t)
+	turns := a.slope*most < 0 || b.slope*most < 0 || a.slope*b.slope < 0
+	if turns || math.Abs(a.slope) <= math.Abs(most) && math.Abs(b.slope) <= math.Abs(most) {
+		return s, false
+	}
+	limit := func(slope float64) float64 {
+		return math.Copysign(math.Min(math.Abs(slope), math.Abs(most)), most)
+	}
+	return hermite(a.t, b.t, a.y, b.y, limit(a.slope), limit(b.slope)), true
 }
 
 // fits compares segment and function at the eighths of the interval. Rounding

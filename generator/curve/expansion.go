@@ -24,7 +24,7 @@ func Resistance(rho Curve, gamma, at float64) (Curve, error) {
 		return Curve{}, err
 	}
 	length := func(t float64) float64 { return 1 + float64(gamma*(t-at)) }
-	return rho.approximateEach(
+	return rho.knotted(at).approximateEach(
 		func(s *Segment, t float64) float64 { return s.value(t) / length(t) },
 		func(s *Segment, t float64) float64 {
 			l := length(t)
@@ -42,11 +42,25 @@ func Resistivity(r Curve, gamma, at float64) (Curve, error) {
 		return Curve{}, err
 	}
 	length := func(t float64) float64 { return 1 + float64(gamma*(t-at)) }
-	return r.approximateEach(
+	return r.knotted(at).approximateEach(
 		func(s *Segment, t float64) float64 { return float64(s.value(t) * length(t)) },
 		func(s *Segment, t float64) float64 {
 			return float64(s.slope(t)*length(t)) + float64(gamma*s.value(t))
 		}, expansionTolerance)
+}
+
+// knotted gives the same curve with a knot at t, if t lies inside it: what is
+// lowered from there is exact at t.
+func (c Curve) knotted(t float64) Curve {
+	s, t := c.owner(t)
+	if s == nil || t <= s.From || t >= s.To {
+		return c
+	}
+	i := c.index(t)
+	segments := append(make([]Segment, 0, len(c.Segments)+1), c.Segments[:i+1]...)
+	segments = append(segments, c.Segments[i:]...)
+	segments[i].To, segments[i+1].From = t, t
+	return Curve{Segments: segments, FromTable: c.FromTable}
 }
 
 // checkExpansion refuses an expansion that would shrink the body to nothing.

@@ -131,7 +131,8 @@ func (s *Segment) direction(a, b float64) int {
 // where the stretch beside them is too narrow to have been seen.
 func (c Curve) turningEnds(found []TurningPoint) []TurningPoint {
 	first, last := &c.Segments[0], &c.Segments[len(c.Segments)-1]
-	if p, ok := first.turnsAt(first.From); ok && (len(found) == 0 || found[0].T > p.T+narrow) {
+	// At absolute zero every resistivity is level, and there is no other side.
+	if p, ok := first.turnsAt(first.From); ok && p.T > 0 && (len(found) == 0 || found[0].T > p.T+narrow) {
 		found = append([]TurningPoint{p}, found...)
 	}
 	if first.From == last.To {
