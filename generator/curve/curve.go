@@ -90,7 +90,8 @@ func (c Curve) mapped(f func(float64) float64) Curve {
 }
 
 // Clip gives the part of the curve between lo and hi, both inside its range.
-// The error is an OutsideRange, or says that lo lies above hi.
+// A part that begins on a shared edge begins with the upper segment. The error
+// is an OutsideRange, or says that lo lies above hi.
 func (c Curve) Clip(lo, hi float64) (Curve, error) {
 	lo, hi, err := c.window(lo, hi)
 	if err != nil {

@@ -107,6 +107,19 @@ func TestExpansionEdges(t *testing.T) {
 	}
 }
 
+// By hand: P/(1 + γτ), P = 1 + ατ + βτ², turns where (α − γ) + 2βτ + βγτ² = 0.
+func TestExpansionMovesThePeak(t *testing.T) {
+	const gamma = 17e-6
+	r := must(t)(Resistance(worked.Curve(c(-55), c(150)), gamma, c(20)))
+	a, b, d := worked.Alpha-gamma, 2*worked.Beta, worked.Beta*gamma
+	tau := -2 * a / (b - math.Sqrt(b*b-4*a*d)) // the root near −7 K
+	points := r.TurningPoints()
+	if len(points) != 1 || !points[0].Maximum {
+		t.Fatalf("got %v, want one maximum", points)
+	}
+	near(t, "peak at", points[0].T, c(20)+tau, 1e-3)
+}
+
 // Taking an R-type α of CuMn12Ni for a ρ-type one moves R at 105 °C by about
 // 1,500 ppm (definitions of the project: 17.5e-6·85 = 1488 ppm).
 func TestBasisMatters(t *testing.T) {

@@ -84,11 +84,21 @@ func TestStraightAndLevelDoNotTurn(t *testing.T) {
 			t.Errorf("%s: extremes %v", name, e)
 		}
 	}
-	// The resistance of a body whose resistivity grows as its length is level but for rounding.
-	straight := Polynomial{Y0: 4.3e-7, Alpha: 17e-6, Reference: c(20)}.Curve(c(-200), c(800))
-	level := must(t)(Resistance(straight, 17e-6, c(20)))
-	if p := level.TurningPoints(); len(p) != 0 {
-		t.Errorf("level but for rounding: got %v", p)
+}
+
+// The resistance of a body whose resistivity grows as its length is level but
+// for rounding, and rounding turns nothing.
+func TestRoundingDoesNotTurn(t *testing.T) {
+	for i := range 200 {
+		gamma := 1e-6 + 1.7e-7*float64(i)
+		straight := Polynomial{Y0: 1e-7 + 3e-9*float64(i), Alpha: gamma, Reference: c(20)}.Curve(c(-200), c(800))
+		level := must(t)(Resistance(straight, gamma, c(20)))
+		again := must(t)(Resistivity(must(t)(Resistance(level, 1e-5, c(20))), 1e-5, c(20)))
+		for _, curve := range []Curve{level, again} {
+			if p := curve.TurningPoints(); len(p) != 0 {
+				t.Fatalf("γ %g: got %v", gamma, p)
+			}
+		}
 	}
 }
 
