@@ -119,12 +119,18 @@ func (s *Segment) direction(a, b float64) int {
 	}
 	d := s.slope(0.5 * (a + b))
 	switch {
-	case math.Abs(d)*(s.To-s.From) <= level*s.magnitude():
+	case s.isLevel(d):
 		return 0
 	case d > 0:
 		return 1
 	}
 	return -1
+}
+
+// isLevel tells whether the slope d would, over the whole segment, change the
+// value by no more than rounding does.
+func (s *Segment) isLevel(d float64) bool {
+	return math.Abs(d)*(s.To-s.From) <= level*s.magnitude()
 }
 
 // turningEnds adds the turning points that stand at the very ends of the range,
@@ -146,6 +152,9 @@ func (c Curve) turningEnds(found []TurningPoint) []TurningPoint {
 
 // turnsAt tells whether the slope of s changes sign at t, within narrow.
 func (s *Segment) turnsAt(t float64) (TurningPoint, bool) {
+	if s.isLevel(s.slope(s.From)) && s.isLevel(s.slope(0.5*(s.From+s.To))) && s.isLevel(s.slope(s.To)) {
+		return TurningPoint{}, false // a slope, a parabola, small at three points is small everywhere
+	}
 	roots, n := s.stationary()
 	for _, x := range roots[:n] {
 		if math.Abs(x-t) <= narrow {
