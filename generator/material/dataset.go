@@ -11,14 +11,14 @@ type Model string
 
 // The models. Point is a resistivity without a coefficient: a point, no curve.
 const (
-	Point            Model = "point"
-	PolynomialModel  Model = "polynomial"
-	TableModel       Model = "table"
-	CallendarModel   Model = "callendar-van-dusen"
-	BlochModel       Model = "bloch-gruneisen"
-	PointsModel      Model = "points"
-	PiecesModel      Model = "pieces"
-	ChordModel       Model = "chord"
+	Point           Model = "point"
+	PolynomialModel Model = "polynomial"
+	TableModel      Model = "table"
+	CallendarModel  Model = "callendar-van-dusen"
+	BlochModel      Model = "bloch-gruneisen"
+	PointsModel     Model = "points"
+	PiecesModel     Model = "pieces"
+	ChordModel      Model = "chord"
 )
 
 // A DataSet is one source's description of the material in one condition.
@@ -76,14 +76,11 @@ type Table struct {
 
 // Told is what a data set can tell of one quantity.
 type Told struct {
-	Nominal curve.Curve  // no segments when the source gives limits without a nominal
-	Limits  *curve.Band  // nil when no limits are stated
+	Nominal curve.Curve // no segments when the source gives limits without a nominal
+	Limits  *curve.Band // nil when no limits are stated
 	// Uncertainty is the standard uncertainty (k = 1) at T, nil when none is stated.
 	Uncertainty func(t float64) float64
 	K           float64  // coverage factor the source printed, 2 when several differ
 	Covers      []string // what Uncertainty contains: "resistivity", "alpha"
 	NotCovered  []string // what it does not: "beta: without uncertainty"
 }
-
-// HasNominal tells whether there is a nominal curve.
-func (t *Told) HasNominal() bool { return t != nil && len(t.Nominal.Segments) > 0 }

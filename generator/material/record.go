@@ -157,7 +157,7 @@ type TCRLimit struct {
 type Stock struct {
 	Form                       string // strip, sheet, foil, wire, bar
 	Thickness, Width, Diameter *quantity.Quantity
-	Gauge                      string // "AWG 24"
+	Gauge                      string             // "AWG 24"
 	Resistance                 *quantity.Quantity // Ω/m
 	Note                       string
 	Source                     *Citation

@@ -65,11 +65,11 @@ type PropertyRow struct {
 
 // SetRow describes one data set.
 type SetRow struct {
-	Name, Model, Basis, Class, Condition, Reference  string
-	Resistivity, Alpha, Beta, Gamma, Range, Scale    string
-	SourceID, SourceWhere, Checked                   string
-	Adopted                                          bool
-	Caveats                                          []string
+	Name, Model, Basis, Class, Condition, Reference string
+	Resistivity, Alpha, Beta, Gamma, Range, Scale   string
+	SourceID, SourceWhere, Checked                  string
+	Adopted                                         bool
+	Caveats                                         []string
 }
 
 // Deviation is what another data set differs by from the adopted one.

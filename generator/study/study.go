@@ -40,16 +40,16 @@ const (
 
 // Outcome is the whole result of one study. Its JSON form is a contract.
 type Outcome struct {
-	Study      string             `json:"study"`
-	Title      string             `json:"title"`
-	Binding    bool               `json:"binding"`
-	Parameters []Parameter        `json:"parameters"`
-	Materials  []MaterialOutcome  `json:"materials"`
-	Ranking    []string           `json:"ranking"`
-	Cautions   []string           `json:"cautions"`
-	Charts     []Chart            `json:"-"`
-	Tables     []Table            `json:"tables"`
-	Position   place.Position     `json:"-"`
+	Study      string            `json:"study"`
+	Title      string            `json:"title"`
+	Binding    bool              `json:"binding"`
+	Parameters []Parameter       `json:"parameters"`
+	Materials  []MaterialOutcome `json:"materials"`
+	Ranking    []string          `json:"ranking"`
+	Cautions   []string          `json:"cautions"`
+	Charts     []Chart           `json:"-"`
+	Tables     []Table           `json:"tables"`
+	Position   place.Position    `json:"-"`
 }
 
 // Parameter is one parameter as it was given.

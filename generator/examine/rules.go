@@ -1,0 +1,50 @@
+package examine
+
+// rules is the one list, sorted by code. Before adding one, ask three
+// questions: is it about correctness, does it happen, is it nearly always
+// right? What was refused stays here with its reason:
+//
+//   - "value looks rounded": not nearly always right.
+//   - "no figure in a report": not about correctness.
+//   - "%IACS times resistivity is not 172.41": a record states one of the
+//     two, the other is computed; two data sets that differ are told by
+//     data-sets-disagree.
+var rules = []Rule{
+	alphaConductivityMismatch,
+	authorIsReviewer,
+	basisMissing,
+	betaUnlikely,
+	bindingOnDraft,
+	bindingStudyFails,
+	classCopiedIntoAlpha,
+	classFigureBroken,
+	classMissing,
+	coefficientTableDisagree,
+	coefficientTooLarge,
+	coefficientUnlikely,
+	conditionMissing,
+	dataSetsDisagree,
+	densityUnlikely,
+	emfUnlikely,
+	expansionUnlikely,
+	factorUnlikely,
+	limitsMissing,
+	linkDangling,
+	memoryInReleased,
+	numberStale,
+	offerUnusable,
+	rangeTooWideForLine,
+	readingOrderUnknown,
+	referenceOutsideRange,
+	referenceUnusual,
+	replacementUnknown,
+	resistivityUnlikely,
+	reviewDue,
+	signOffMissing,
+	sourceSuperseded,
+	sourceUnknown,
+	supersederUnknown,
+	thermalConductivityUnlikely,
+	turningPointHidden,
+	uncertaintyWithoutK,
+}

@@ -1,0 +1,74 @@
+package quantity
+
+import (
+	"math"
+	"strconv"
+	"strings"
+)
+
+// ZeroCelsius is 0 °C in kelvin, exact by definition.
+const ZeroCelsius = 273.15
+
+// NarrowSpace stands between number and unit; it never breaks a line.
+const NarrowSpace = "\u202f"
+
+// DegreesText prints a temperature given in kelvin as °C without the unit, at
+// most three decimals, with a true minus.
+func DegreesText(kelvin float64) string {
+	return trimmed(kelvin - ZeroCelsius)
+}
+
+// CelsiusText prints a temperature given in kelvin as "−40 °C".
+func CelsiusText(kelvin float64) string { return DegreesText(kelvin) + NarrowSpace + "°C" }
+
+// KelvinText prints a temperature in kelvin without the unit, at most three
+// decimals.
+func KelvinText(kelvin float64) string { return trimmed(kelvin) }
+
+func trimmed(x float64) string {
+	x = math.Round(x*1000) / 1000
+	s := strconv.FormatFloat(math.Abs(x), 'f', -1, 64)
+	if x < 0 {
+		return "−" + s
+	}
+	return s
+}
+
+// Fixed prints x with a given number of decimals and a true minus; a number
+// that rounds to zero has no sign.
+func Fixed(x float64, decimals int) string {
+	s := strconv.FormatFloat(x, 'f', decimals, 64)
+	if strings.Trim(s, "-0.") == "" {
+		return strings.TrimPrefix(s, "-")
+	}
+	return strings.Replace(s, "-", "−", 1)
+}
+
+// PPMText prints a relative number (1) in ppm without the unit: one decimal
+// below 100 ppm, none above.
+func PPMText(x float64) string {
+	p := float64(x * 1e6)
+	if math.Abs(p) < 99.95 {
+		return Fixed(p, 1)
+	}
+	return Fixed(p, 0)
+}
+
+// ChangeText prints a relative change (1) with its unit, in ppm below one per
+// cent and in % from there on.
+func ChangeText(x float64) string {
+	if math.Abs(x) >= 0.01 {
+		return Fixed(float64(x*100), 2) + NarrowSpace + "%"
+	}
+	return PPMText(x) + NarrowSpace + "ppm"
+}
+
+// Round12 keeps 12 significant digits: last bits differ between processors,
+// and data files must not.
+func Round12(x float64) float64 {
+	if x == 0 || math.IsNaN(x) || math.IsInf(x, 0) {
+		return x
+	}
+	r, _ := strconv.ParseFloat(strconv.FormatFloat(x, 'g', 12, 64), 64)
+	return r
+}

@@ -1,0 +1,111 @@
+package quantity
+
+import "strings"
+
+// Unit is one unit of a kind: SI = (x + offset)·factor, or factor/x for the
+// reciprocal ones.
+type Unit struct {
+	Symbol string // typographic, "µΩ·cm"; "" for a plain ratio
+	ASCII  string // "uohm cm"
+	UCUM   string // code of the Unified Code for Units of Measure, "" when it has none
+	Kind   Kind
+
+	factor float64
+	offset float64
+}
+
+// ToSI converts a number in u to SI.
+func (u Unit) ToSI(x float64) float64 { return (x + u.offset) * u.factor }
+
+// FromSI converts an SI number to u.
+func (u Unit) FromSI(x float64) float64 { return x/u.factor - u.offset }
+
+// difference converts a difference in u to SI: the offset falls away.
+func (u Unit) difference(x float64) float64 { return x * u.factor }
+
+// FindUnit finds a unit of kind k by any spelling that people use: both code
+// points of µ and of Ω, ASCII, · * . or a space as product.
+func FindUnit(k Kind, spelled string) (Unit, bool) {
+	u, ok := bySpelling[k][spelled]
+	if !ok {
+		u, ok = bySpelling[k][normalise(spelled)]
+	}
+	return u, ok
+}
+
+// Units returns the units of kind k in the order of the table, usual first.
+func Units(k Kind) []Unit {
+	for _, g := range table {
+		if g.kind == k {
+			list := make([]Unit, len(g.rows))
+			for i, r := range g.rows {
+				list[i] = r.unit(g.kind)
+			}
+			return list
+		}
+	}
+	return nil
+}
+
+// KindsOf lists the kinds that a spelling is a unit of, for messages that say
+// "Ω/m is a resistance per length".
+func KindsOf(spelled string) []Kind {
+	var list []Kind
+	for _, g := range table {
+		if _, ok := FindUnit(g.kind, spelled); ok {
+			list = append(list, g.kind)
+		}
+	}
+	return list
+}
+
+// NearUnit gives the usual units of a kind, for messages.
+func NearUnit(k Kind, spelled string) string {
+	var list []string
+	for i, u := range Units(k) {
+		if i < 3 && u.Symbol != "" {
+			list = append(list, u.Symbol)
+		}
+	}
+	return strings.Join(list, ", ")
+}
+
+// bySpelling holds every normalised spelling of every unit.
+var bySpelling = buildSpellings()
+
+func buildSpellings() map[Kind]map[string]Unit {
+	all := map[Kind]map[string]Unit{}
+	for _, g := range table {
+		m := map[string]Unit{}
+		for _, r := range g.rows {
+			u := r.unit(g.kind)
+			for _, s := range append([]string{r.symbol, r.ascii}, strings.Split(r.also, "|")...) {
+				if s != "" || r.symbol == "" {
+					m[s], m[normalise(s)] = u, u
+				}
+			}
+		}
+		all[g.kind] = m
+	}
+	return all
+}
+
+// replacer folds the spellings of one thing into one.
+var replacer = strings.NewReplacer(
+	"µ", "u", "μ", "u", "Ω", "ohm", "Ω", "ohm", "°", "deg", "º", "deg", "℃", "degC", "℉", "degF", "□", "sq", "Δ", "delta",
+	"·", "*", "⋅", "*", "×", "*", ".", "*", "⁻", "^-", "²", "^2", "³", "^3", "⁴", "^4", "¹", "^1",
+	" ", "", "\u00a0", "", "\u202f", "", "\u2009", "", "**", "^", "−", "-", "ohms", "ohm", "Ohm", "ohm", "OHM", "ohm",
+)
+
+// normalise folds a spelling: ASCII letters, * as product, ^ as power, no
+// blanks; a product sign between letters is dropped, so that "uohm cm",
+// "uohm*cm" and "µΩ·cm" are one.
+func normalise(s string) string {
+	s = replacer.Replace(s)
+	s = strings.ReplaceAll(s, "^-^", "^-")
+	s = strings.ReplaceAll(s, "*", "")
+	for _, p := range [...][2]string{{"^2", "2"}, {"^3", "3"}, {"^4", "4"}, {"deltadeg", "delta"}, {"degK", "K"}} {
+		s = strings.ReplaceAll(s, p[0], p[1])
+	}
+	return s
+}

@@ -1,0 +1,15 @@
+package study
+
+// The cautions of the trade. Each study shows those that apply, in body-text
+// size and beside its numbers. Common practice; local codes come first.
+const (
+	CautionNotApproval = "A verdict is a calculation from recorded values, not an approval. Verify by test."
+	CautionCodes       = "Local codes, the applicable product standards and licensed practice come first."
+	CautionHot         = "Conductors that carry large currents and heating elements get hot enough to burn skin and to start a fire. Computed temperatures are averages; hot spots are hotter."
+	CautionIsolate     = "Isolate, lock out and discharge before measuring."
+	CautionBattery     = "Battery circuits: mind the prospective fault current and the direct-current arc; fuse the sense leads at the tap."
+	CautionProtective  = "Never let one of these numbers be the only means of a protective function."
+)
+
+// comparisonCautions go with every comparison that someone may choose a part by.
+var comparisonCautions = []string{CautionNotApproval, CautionHot, CautionIsolate, CautionProtective, CautionCodes}

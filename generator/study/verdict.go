@@ -1,0 +1,82 @@
+package study
+
+import (
+	"math"
+
+	"ohmfolio/generator/quantity"
+)
+
+// bound is what is required of one number: its magnitude must not exceed
+// Limit (in the number's own unit).
+type bound struct {
+	name  string
+	limit float64
+}
+
+// requireBounds reads the bounds of a comparison in the units of its numbers.
+func (c *comparison) bounds() []bound {
+	var list []bound
+	node := c.in.Block.Get("require")
+	for _, name := range []string{rankChange, rankBox} {
+		if q, ok := node.Get(name).Quantity(); ok {
+			list = append(list, bound{name, float64(q.Value * 1e6)})
+		}
+	}
+	return list
+}
+
+// require judges one material (definitions: verdicts). Without limits on the
+// coefficients a bound can only hold on nominal values.
+func (c *comparison) require(m *MaterialOutcome) {
+	bounds := c.bounds()
+	if len(bounds) == 0 {
+		return
+	}
+	m.Verdict = Holds
+	for _, b := range bounds {
+		r := judgeMagnitude(b, m.Numbers[b.name])
+		if m.Partly != "" && r.Verdict != Fails {
+			r.Verdict = CannotBeTold
+		}
+		if at, ok := m.Numbers["greatest_at"]; ok && b.name == rankChange {
+			r.AtC = at.Value
+		}
+		m.Requirements = append(m.Requirements, r)
+		m.Verdict = worse(m.Verdict, r.Verdict)
+		if r.Verdict != Holds {
+			m.Reasons = append(m.Reasons, b.name+" "+string(r.Verdict)+": "+m.Numbers[b.name].Text+" against "+quantity.Number(b.limit, 4)+" "+m.Numbers[b.name].Unit)
+		}
+	}
+}
+
+// judgeMagnitude holds |n| against a bound. margin = (limit − worst)/limit.
+func judgeMagnitude(b bound, n Number) Requirement {
+	r := Requirement{Name: b.name, Limit: b.limit, Verdict: CannotBeTold}
+	if n.Value == nil {
+		return r
+	}
+	worst, best := math.Abs(*n.Value), math.Abs(*n.Value)
+	if n.Lower != nil && n.Upper != nil {
+		worst = math.Max(math.Abs(*n.Lower), math.Abs(*n.Upper))
+	}
+	r.Worst, r.Margin = number(worst), number((b.limit-worst)/b.limit)
+	switch {
+	case n.Kind == "nominal" && worst <= b.limit:
+		r.Verdict = HoldsNominally
+	case worst <= b.limit:
+		r.Verdict = Holds
+	case best > b.limit && n.Kind == "nominal":
+		r.Verdict = Fails
+	}
+	return r
+}
+
+// severity orders verdicts from best to worst.
+var severity = map[Verdict]int{Holds: 0, HoldsNominally: 1, CannotBeTold: 2, Fails: 3}
+
+func worse(a, b Verdict) Verdict {
+	if severity[b] > severity[a] {
+		return b
+	}
+	return a
+}
