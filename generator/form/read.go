@@ -1,0 +1,408 @@
+package form
+
+import (
+	"fmt"
+	"math"
+	"strconv"
+	"strings"
+	"time"
+
+	"gopkg.in/yaml.v3"
+
+	"ohmfolio/generator/place"
+	"ohmfolio/generator/quantity"
+)
+
+// Read reads src as a mapping of the shape. The node is nil when the text
+// cannot be read at all; otherwise the findings tell what is wrong in it.
+func Read(src *place.Source, shape *Shape) (*Node, []place.Finding) {
+	return ReadAs(src, Mapping(shape))
+}
+
+// ReadAs reads src as a value of any type, for files whose keys are free.
+func ReadAs(src *place.Source, t Type) (*Node, []place.Finding) {
+	r := &reader{src: src, list: place.List{Source: src}}
+	root := r.parse()
+	if root == nil {
+		return nil, r.list.Findings
+	}
+	n := r.value(root, t, 0)
+	return n, r.list.Findings
+}
+
+// value checks y against t; nil after a finding that leaves nothing usable.
+func (r *reader) value(y *yaml.Node, t Type, depth int) *Node {
+	if depth > maxDepth {
+		r.add("nested-too-deep", r.at(y), "the nesting is too deep", fmt.Sprintf("keep it under %d levels", maxDepth))
+		return nil
+	}
+	if !r.plain(y) {
+		return nil
+	}
+	switch t.what {
+	case isEither:
+		return r.either(y, t, depth)
+	case isMapping:
+		return r.mapping(y, t.shape, depth)
+	case isNamed:
+		return r.named(y, *t.of, depth)
+	case isList:
+		return r.sequence(y, *t.of, depth)
+	case isRows:
+		return r.numberRows(y)
+	}
+	return r.scalar(y, t)
+}
+
+// plain refuses the parts of YAML that hide what is written.
+func (r *reader) plain(y *yaml.Node) bool {
+	switch {
+	case y.Kind == yaml.AliasNode:
+		r.add("yaml-alias", r.at(y), "an alias (*"+y.Value+") stands here", "write the value out")
+	case y.Anchor != "":
+		r.add("yaml-alias", r.at(y), "an anchor (&"+y.Anchor+") stands here", "take it out; write values out where they are needed")
+	case y.Style&yaml.TaggedStyle != 0:
+		r.add("yaml-tag", r.at(y), "a tag ("+y.Tag+") stands here", "take it out: the key says what the value is")
+	default:
+		return true
+	}
+	return false
+}
+
+func (r *reader) either(y *yaml.Node, t Type, depth int) *Node {
+	for _, a := range t.any {
+		if fits(y, a) {
+			return r.value(y, a, depth)
+		}
+	}
+	r.wrongType(y, t)
+	return nil
+}
+
+func fits(y *yaml.Node, t Type) bool {
+	switch t.what {
+	case isMapping, isNamed:
+		return y.Kind == yaml.MappingNode
+	case isList, isRows:
+		return y.Kind == yaml.SequenceNode
+	}
+	return y.Kind == yaml.ScalarNode
+}
+
+func (r *reader) wrongType(y *yaml.Node, t Type) {
+	r.add("type-wrong", r.at(y), kindOf(y)+" stands where "+t.describe()+" is needed", "write "+t.describe())
+}
+
+func kindOf(y *yaml.Node) string {
+	switch y.Kind {
+	case yaml.MappingNode:
+		return "a mapping"
+	case yaml.SequenceNode:
+		return "a list"
+	}
+	if y.Value == "" {
+		return "nothing"
+	}
+	return quote(y.Value)
+}
+
+// describe says in words what a type is.
+func (t Type) describe() string {
+	switch t.what {
+	case isMapping:
+		return "a mapping with the keys " + strings.Join(t.shape.Keys(), ", ")
+	case isNamed:
+		return "a mapping of names"
+	case isList:
+		return "a list"
+	case isRows:
+		return "a list of rows of numbers"
+	case isQuantity:
+		return "a " + string(t.kinds[0]) + " with its unit"
+	case isRange:
+		return "a range of " + string(t.kinds[0])
+	case isOneOf:
+		return "one of " + strings.Join(t.words, ", ")
+	case isInteger:
+		return "a whole number"
+	case isNumber:
+		return "a number"
+	case isYesNo:
+		return "yes or no"
+	case isDate:
+		return "a date such as 2026-05-04"
+	case isEither:
+		var list []string
+		for _, a := range t.any {
+			list = append(list, a.describe())
+		}
+		return strings.Join(list, ", or ")
+	}
+	return "text"
+}
+
+// mapping reads a mapping with known keys.
+func (r *reader) mapping(y *yaml.Node, s *Shape, depth int) *Node {
+	if y.Kind != yaml.MappingNode {
+		r.wrongType(y, Mapping(s))
+		return nil
+	}
+	n := &Node{at: r.at(y), has: isMapping}
+	r.pairs(y, n, func(key *yaml.Node) (Type, bool) {
+		f := s.field(key.Value)
+		if f == nil {
+			r.unknownKey(key, s)
+			return Type{}, false
+		}
+		return f.Is, true
+	}, depth)
+	for _, f := range s.Fields {
+		if f.Required && !hasKey(y, f.Key) {
+			r.add("key-missing", n.at, s.Name+" needs the key "+f.Key, "add "+f.Key+": "+f.Example)
+		}
+	}
+	return n
+}
+
+func hasKey(y *yaml.Node, key string) bool {
+	for i := 0; i+1 < len(y.Content); i += 2 {
+		if y.Content[i].Value == key {
+			return true
+		}
+	}
+	return false
+}
+
+func (r *reader) unknownKey(key *yaml.Node, s *Shape) {
+	mend := "the keys of " + s.Name + " are " + strings.Join(s.Keys(), ", ")
+	if near := place.Near(key.Value, s.Keys()); near != "" {
+		mend = "did you mean " + near + "?"
+	}
+	r.add("key-unknown", r.at(key), "the key "+quote(key.Value)+" is not one of "+s.Name, mend)
+}
+
+// named reads a mapping with free keys.
+func (r *reader) named(y *yaml.Node, of Type, depth int) *Node {
+	if y.Kind != yaml.MappingNode {
+		r.wrongType(y, Named(of))
+		return nil
+	}
+	n := &Node{at: r.at(y), has: isNamed}
+	r.pairs(y, n, func(*yaml.Node) (Type, bool) { return of, true }, depth)
+	return n
+}
+
+// pairs reads the keys and values of a mapping; typeOf says what a key holds.
+func (r *reader) pairs(y *yaml.Node, n *Node, typeOf func(key *yaml.Node) (Type, bool), depth int) {
+	for i := 0; i+1 < len(y.Content); i += 2 {
+		key, value := y.Content[i], y.Content[i+1]
+		if !r.key(y, i) || r.splitNumber(y, i) {
+			continue
+		}
+		if at := r.repeated(n, key); at != nil {
+			continue
+		}
+		t, ok := typeOf(key)
+		if !ok {
+			continue
+		}
+		v := r.value(value, t, depth+1)
+		if v == nil {
+			continue
+		}
+		v.keyAt = r.at(key)
+		n.keys, n.items = append(n.keys, key.Value), append(n.items, v)
+	}
+}
+
+// key refuses merge keys, and keys that are no plain text.
+func (r *reader) key(y *yaml.Node, i int) bool {
+	key := y.Content[i]
+	if key.Kind != yaml.ScalarNode || !r.plain(key) {
+		if key.Kind != yaml.ScalarNode && key.Kind != yaml.AliasNode {
+			r.add("type-wrong", r.at(key), "a key must be a word", "write the key as a plain word")
+		}
+		return false
+	}
+	if key.Tag == "!!merge" {
+		r.add("yaml-alias", r.at(key), "a merge key (<<) stands here", "write the values out")
+		return false
+	}
+	return true
+}
+
+// splitNumber finds {value: 8,4 g/cm³}, which YAML reads as two keys: the
+// second one has no value and begins with a digit.
+func (r *reader) splitNumber(y *yaml.Node, i int) bool {
+	key, value := y.Content[i], y.Content[i+1]
+	if i == 0 || y.Style&yaml.FlowStyle == 0 || value.Value != "" || value.Tag != "!!null" || key.Value == "" {
+		return false
+	}
+	before := y.Content[i-1].Value
+	if before == "" || !digit(before[len(before)-1]) || !digit(key.Value[0]) {
+		return false
+	}
+	r.add("comma-decimal", r.at(y.Content[i-1]), "the number "+quote(before+","+key.Value)+" has a comma", "write a decimal point: "+before+"."+key.Value)
+	return true
+}
+
+func digit(c byte) bool { return c >= '0' && c <= '9' }
+
+// repeated reports a key that stands twice, with the other place.
+func (r *reader) repeated(n *Node, key *yaml.Node) *place.Position {
+	first := n.Get(key.Value)
+	if first == nil {
+		return nil
+	}
+	f := r.add("key-repeated", r.at(key), "the key "+quote(key.Value)+" stands twice", "keep one of the two")
+	f.Also = &place.Also{Position: first.keyAt, Message: "it stands here already"}
+	return &first.keyAt
+}
+
+func (r *reader) sequence(y *yaml.Node, of Type, depth int) *Node {
+	if y.Kind != yaml.SequenceNode {
+		r.wrongType(y, List(of))
+		return nil
+	}
+	n := &Node{at: r.at(y), has: isList}
+	for _, e := range y.Content {
+		if v := r.value(e, of, depth+1); v != nil {
+			n.items = append(n.items, v)
+		}
+	}
+	return n
+}
+
+func (r *reader) numberRows(y *yaml.Node) *Node {
+	if y.Kind != yaml.SequenceNode {
+		r.wrongType(y, Rows)
+		return nil
+	}
+	n := &Node{at: r.at(y), has: isRows, converted: true}
+	for _, row := range y.Content {
+		item, values, ok := r.numberRow(row)
+		if !ok {
+			n.converted = false
+			continue
+		}
+		n.items, n.rows = append(n.items, item), append(n.rows, values)
+	}
+	return n
+}
+
+func (r *reader) numberRow(y *yaml.Node) (*Node, []float64, bool) {
+	if y.Kind != yaml.SequenceNode || !r.plain(y) {
+		r.add("type-wrong", r.at(y), kindOf(y)+" stands where a row of numbers is needed", "write [temperature, value]")
+		return nil, nil, false
+	}
+	n := &Node{at: r.at(y), has: isList}
+	values := make([]float64, 0, len(y.Content))
+	for _, c := range y.Content {
+		x, ok := r.finite(c)
+		if !ok {
+			return nil, nil, false
+		}
+		values = append(values, x)
+		n.items = append(n.items, &Node{at: r.at(c), text: c.Value, has: isNumber, number: x, converted: true})
+	}
+	return n, values, true
+}
+
+func (r *reader) finite(y *yaml.Node) (float64, bool) {
+	x, err := strconv.ParseFloat(strings.Replace(y.Value, "−", "-", 1), 64)
+	switch {
+	case y.Kind != yaml.ScalarNode || (err != nil && !math.IsInf(x, 0)):
+		r.add("type-wrong", r.at(y), kindOf(y)+" stands where a number is needed", "write a plain number with a decimal point")
+		return 0, false
+	case math.IsNaN(x) || math.IsInf(x, 0):
+		r.add("number-not-finite", r.at(y), "the number "+quote(y.Value)+" is not finite", "write the number that the source prints")
+		return 0, false
+	}
+	return x, true
+}
+
+// scalar reads text, numbers, words, dates, quantities and ranges.
+func (r *reader) scalar(y *yaml.Node, t Type) *Node {
+	if y.Kind != yaml.ScalarNode {
+		r.wrongType(y, t)
+		return nil
+	}
+	n := &Node{at: r.at(y), text: y.Value, has: t.what, converted: true}
+	if y.Value == "" {
+		r.add("value-missing", n.at, "no value stands here", "write "+t.describe()+", or take the key out")
+		return nil
+	}
+	switch t.what {
+	case isInteger:
+		r.integer(y, n, t)
+	case isNumber:
+		n.number, n.converted = r.finite(y)
+	case isYesNo:
+		r.yesNo(y, n, t)
+	case isDate:
+		if _, err := time.Parse("2006-01-02", y.Value); err != nil {
+			n.converted = false
+			r.add("date-not-read", n.at, quote(y.Value)+" is no date", "write year-month-day: 2026-05-04")
+		}
+	case isOneOf:
+		r.oneOf(y, n, t)
+	case isQuantity:
+		q, p := quantity.ParseOneOf(y.Value, t.kinds...)
+		n.quantity, n.converted = q, r.problem(y, p)
+	case isRange:
+		lo, hi, p := quantity.ParseRange(t.kinds[0], y.Value)
+		n.quantity, n.high, n.converted = lo, hi, r.problem(y, p)
+	}
+	return n
+}
+
+func (r *reader) integer(y *yaml.Node, n *Node, t Type) {
+	x, err := strconv.Atoi(y.Value)
+	n.integer, n.converted = x, err == nil
+	if err != nil {
+		r.wrongType(y, t)
+	}
+}
+
+func (r *reader) yesNo(y *yaml.Node, n *Node, t Type) {
+	switch y.Value {
+	case "yes", "true":
+		n.yes = true
+	case "no", "false":
+	default:
+		n.converted = false
+		r.wrongType(y, t)
+	}
+}
+
+func (r *reader) oneOf(y *yaml.Node, n *Node, t Type) {
+	for _, w := range t.words {
+		if y.Value == w {
+			return
+		}
+	}
+	n.converted = false
+	mend := "write one of " + strings.Join(t.words, ", ")
+	if near := place.Near(y.Value, t.words); near != "" {
+		mend = "did you mean " + near + "? Otherwise " + mend
+	}
+	r.add("word-unknown", n.at, quote(y.Value)+" is not one of the words known here", mend)
+}
+
+// problem turns a quantity's problem into a finding with its caret inside the
+// scalar; it tells whether there was none.
+func (r *reader) problem(y *yaml.Node, p *quantity.Problem) bool {
+	if p == nil {
+		return true
+	}
+	at := r.at(y)
+	if y.Style&(yaml.DoubleQuotedStyle|yaml.SingleQuotedStyle) != 0 {
+		at.Column++
+	}
+	at.Column += p.Offset
+	at.Length = p.Length
+	r.add(p.Code, at, p.Message, p.Mend)
+	return false
+}
+
+func quote(s string) string { return "“" + s + "”" }
