@@ -1,0 +1,172 @@
+package figure
+
+import (
+	"bytes"
+
+	"github.com/golang/freetype/truetype"
+	"github.com/wcharczuk/go-chart/v2"
+)
+
+// noFont keeps go-chart from loading its own: our renderer needs none.
+var noFont = new(truetype.Font)
+
+// render draws the figure through go-chart onto the SVG renderer.
+func (f *Figure) render(b *bytes.Buffer, l layout) error {
+	svg := &svgRenderer{b: b, f: f, width: l.width, height: l.height}
+	hidden := chart.Style{Hidden: true}
+	c := chart.Chart{
+		Width: l.width, Height: l.height, Font: noFont,
+		Background: hidden, Canvas: hidden,
+		XAxis:          chart.XAxis{Style: hidden, Range: newRange(l.x)},
+		YAxis:          chart.YAxis{Style: hidden, Range: newRange(l.y)},
+		YAxisSecondary: chart.YAxis{Style: hidden, Range: newRange(l.y)},
+		Series:         []chart.Series{layer{l: l, draw: f.draw}},
+	}
+	return c.Render(func(int, int) (chart.Renderer, error) { return svg, nil }, b)
+}
+
+// draw draws from back to front.
+func (f *Figure) draw(r chart.Renderer, l layout) {
+	grid(r, l)
+	for _, a := range f.Areas {
+		area(r, l, a)
+	}
+	for _, m := range f.Marks {
+		mark(r, l, m)
+	}
+	for i := len(f.Lines) - 1; i >= 0; i-- { // the first curve on top
+		line(r, l, f.Lines[i])
+	}
+	for _, p := range f.Points {
+		points(r, l, p)
+	}
+	f.words(r, l)
+}
+
+func grid(r chart.Renderer, l layout) {
+	r.SetClassName("grid")
+	for _, t := range l.y.ticks {
+		y := l.y.at(t)
+		r.MoveTo(l.x.from, y)
+		r.LineTo(l.x.to, y)
+	}
+	r.Stroke()
+	r.SetClassName("axis")
+	r.MoveTo(l.x.from, l.y.to)
+	r.LineTo(l.x.from, l.y.from)
+	r.LineTo(l.x.to, l.y.from)
+	for _, t := range l.x.ticks {
+		r.MoveTo(l.x.at(t), l.y.from)
+		r.LineTo(l.x.at(t), l.y.from+5*unit)
+	}
+	r.Stroke()
+}
+
+func area(r chart.Renderer, l layout, a Area) {
+	r.SetClassName("area " + ink(a.Ink))
+	for i := range a.X {
+		step(r, i == 0, l.x.at(a.X[i]), l.y.at(a.Upper[i]))
+	}
+	for i := len(a.X) - 1; i >= 0; i-- {
+		r.LineTo(l.x.at(a.X[i]), l.y.at(a.Lower[i]))
+	}
+	r.Close()
+	r.Fill()
+}
+
+func step(r chart.Renderer, first bool, x, y int) {
+	if first {
+		r.MoveTo(x, y)
+		return
+	}
+	r.LineTo(x, y)
+}
+
+func line(r chart.Renderer, l layout, c Line) {
+	class := "curve " + ink(c.Ink) + " " + dash(c.Dash)
+	if c.Thin {
+		class += " thin"
+	}
+	r.SetClassName(class)
+	for i := range c.X {
+		step(r, i == 0, l.x.at(c.X[i]), l.y.at(c.Y[i]))
+	}
+	r.Stroke()
+}
+
+func mark(r chart.Renderer, l layout, m Mark) {
+	if m.X < l.x.lo || m.X > l.x.hi {
+		return
+	}
+	r.SetClassName("mark")
+	r.MoveTo(l.x.at(m.X), l.y.to)
+	r.LineTo(l.x.at(m.X), l.y.from)
+	r.Stroke()
+}
+
+func points(r chart.Renderer, l layout, p Points) {
+	r.SetClassName("point " + ink(p.Ink))
+	for _, q := range p.List {
+		x, y := l.x.at(q.X), l.y.at(q.Y)
+		r.MoveTo(x-3*unit, y)
+		r.LineTo(x+3*unit, y)
+		r.MoveTo(x, l.y.at(q.Y-q.ErrY)+2*unit)
+		r.LineTo(x, l.y.at(q.Y+q.ErrY)-2*unit)
+		if q.ErrX > 0 {
+			r.MoveTo(l.x.at(q.X-q.ErrX), y)
+			r.LineTo(l.x.at(q.X+q.ErrX), y)
+		}
+	}
+	r.Stroke()
+}
+
+// words writes ticks, titles and labels.
+func (f *Figure) words(r chart.Renderer, l layout) {
+	r.SetClassName("tick-y")
+	for _, t := range l.y.ticks {
+		r.Text(l.y.text(t), l.x.from-7*unit, l.y.at(t)+4*unit)
+	}
+	r.SetClassName("tick-x")
+	for _, t := range l.x.ticks {
+		r.Text(l.x.text(t), l.x.at(t), l.y.from+18*unit)
+	}
+	r.SetClassName("title-y")
+	r.Text(f.YTitle, 4*unit, 14*unit)
+	r.SetClassName("title-x")
+	r.Text(f.XTitle, l.x.to, l.height-6*unit)
+	for _, b := range l.labels {
+		r.SetClassName("label " + ink(b.ink))
+		r.Text(b.text, b.x, b.y+4*unit)
+	}
+}
+
+func ink(n int) string { return [...]string{"ink-1", "ink-2", "ink-3", "ink-4"}[clamp(n)] }
+
+func dash(n int) string { return [...]string{"dash-1", "dash-2", "dash-3", "dash-4"}[clamp(n)] }
+
+func clamp(n int) int { return max(0, min(3, n-1)) }
+
+// layer is the whole drawing as one series of go-chart's.
+type layer struct {
+	l    layout
+	draw func(r chart.Renderer, l layout)
+}
+
+func (layer) GetName() string                                                         { return "" }
+func (layer) GetYAxis() chart.YAxisType                                               { return chart.YAxisPrimary }
+func (layer) GetStyle() chart.Style                                                   { return chart.Style{} }
+func (layer) Validate() error                                                         { return nil }
+func (a layer) Render(r chart.Renderer, _ chart.Box, _, _ chart.Range, _ chart.Style) { a.draw(r, a.l) }
+
+// fixedRange is a range that go-chart cannot move: its own would be shrunk to
+// explicit ticks and curves would leave the canvas.
+type fixedRange struct {
+	chart.ContinuousRange
+}
+
+func newRange(a axis) *fixedRange {
+	return &fixedRange{chart.ContinuousRange{Min: a.lo, Max: a.hi, Domain: 1}}
+}
+
+func (*fixedRange) SetMin(float64) {}
+func (*fixedRange) SetMax(float64) {}
