@@ -2,52 +2,73 @@ package quantity
 
 import "math"
 
-// ResistivityFromConductivity turns σ into ρ = 1/σ. Limits and uncertainties
-// change places and become asymmetric.
+// ResistivityFromConductivity turns a conductivity in S/m into
+//
+//	ρ = 1/σ
+//
+// in Ω·m. Limits and uncertainties change places, and a symmetric ± becomes
+// asymmetric: ρ₋ = ρ − 1/(σ + a), ρ₊ = 1/(σ − a) − ρ. A lower limit of σ at or
+// below zero gives no upper limit of ρ. Text stays as the author wrote it; the
+// unit is the usual one of resistivity. The value must be above zero.
 func ResistivityFromConductivity(q Quantity) Quantity {
-	r := q
-	r.Kind, r.Value = Resistivity, 1/q.Value
+	r := derived(q)
+	r.Value = 1 / q.Value
+	r.step, r.fine = math.Abs(q.step/q.Value/q.Value), math.Abs(q.fine/q.Value/q.Value)
 	if q.Limits != nil {
-		r.Limits = &Limits{reciprocal(q.Limits.Upper), reciprocal(q.Limits.Lower)}
-		if q.Limits.Lower <= 0 {
-			r.Limits.Upper = math.Inf(1)
+		r.Limits = &Limits{math.Inf(-1), math.Inf(1)}
+		if q.Limits.Lower > 0 {
+			r.Limits.Upper = 1 / q.Limits.Lower
+		}
+		if q.Limits.Upper > 0 && !math.IsInf(q.Limits.Upper, 0) {
+			r.Limits.Lower = 1 / q.Limits.Upper
 		}
 	}
 	if u := q.Uncertainty; u != nil {
-		r.Uncertainty = &Uncertainty{Minus: 1/q.Value - 1/(q.Value+u.Plus), Plus: 1/(q.Value-u.Minus) - 1/q.Value, K: u.K}
+		r.Uncertainty = &Uncertainty{Minus: 1/q.Value - 1/(q.Value+u.Plus), Plus: math.Inf(1), K: u.K}
+		if u.Minus < q.Value {
+			r.Uncertainty.Plus = 1/(q.Value-u.Minus) - 1/q.Value
+		}
 	}
 	return r
 }
 
-func reciprocal(x float64) float64 {
-	if math.IsInf(x, 0) {
-		return 0
-	}
-	return 1 / x
-}
-
-// ResistivityFromMass turns a mass resistivity (Ω·kg/m²) into ρ = ρ_m/δ with
-// the density δ in kg/m³. The ± of the density is not carried: the printed
-// mass resistivity is what was measured.
+// ResistivityFromMass turns a mass resistivity ρ_m in Ω·kg/m² into
+//
+//	ρ = ρ_m/δ
+//
+// in Ω·m, with the density δ in kg/m³, which must be above zero. The ± of the
+// density is not carried: the printed mass resistivity is what was measured.
 func ResistivityFromMass(q Quantity, density float64) Quantity {
-	return scaled(q, Resistivity, 1/density)
+	return scaled(q, 1/density)
 }
 
-// ResistivityFromSheet turns a sheet resistance (Ω per square) into
-// ρ = R□·t with the thickness t in m.
+// ResistivityFromSheet turns a sheet resistance R□ in Ω per square into
+//
+//	ρ = R□·t
+//
+// in Ω·m, with the thickness t in m, which must be above zero. The ± of the
+// thickness is not carried.
 func ResistivityFromSheet(q Quantity, thickness float64) Quantity {
-	return scaled(q, Resistivity, thickness)
+	return scaled(q, thickness)
 }
 
-func scaled(q Quantity, k Kind, f float64) Quantity {
-	r := q
-	r.Kind, r.Value = k, float64(q.Value*f)
+func scaled(q Quantity, f float64) Quantity {
+	r := derived(q)
+	r.Value, r.step, r.fine = float64(q.Value*f), float64(q.step*f), float64(q.fine*f)
 	if q.Limits != nil {
 		r.Limits = &Limits{float64(q.Limits.Lower * f), float64(q.Limits.Upper * f)}
 	}
 	if u := q.Uncertainty; u != nil {
 		r.Uncertainty = &Uncertainty{float64(u.Minus * f), float64(u.Plus * f), u.K}
 	}
+	return r
+}
+
+// derived is q as a resistivity that is still to be filled in.
+func derived(q Quantity) Quantity {
+	r := q
+	r.Kind, r.limitStep = Resistivity, 0
+	r.Unit = Units(Resistivity)[0]
 	return r
 }
 

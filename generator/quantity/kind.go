@@ -61,6 +61,10 @@ type Quantity struct {
 	Digits      int     // significant digits written, of the value or of the limits
 	Limits      *Limits
 	Uncertainty *Uncertainty
+
+	step      float64 // SI, one unit in the last written place; 0 when unknown
+	limitStep float64 // SI, the same of limits that stand beside a value
+	fine      float64 // SI, the finest of value and ±: 1 mm ± 0.02 mm is known to 0.01 mm
 }
 
 // HasValue tells whether there is a nominal value.

@@ -6,21 +6,23 @@ import (
 )
 
 // Parse reads one quantity of kind k: a value with its unit and an optional
-// ±, a range, or a one-sided bound. The unit as written is kept; the value is
-// in SI.
+// ±, two values joined by the word to, or a one-sided bound. The unit as
+// written is kept; the value is in SI.
 func Parse(k Kind, text string) (Quantity, *Problem) {
-	p := parser{scanner: scanner{text: text}, kind: k, q: Quantity{Text: text, Kind: k, Value: math.NaN()}}
-	p.skipBlank()
-	if problem := p.whole(); problem != nil {
-		return Quantity{Text: text, Kind: k, Value: math.NaN()}, problem
+	q, p := read(k, text)
+	if p == nil && q.Limits != nil && q.Limits.Lower > q.Limits.Upper {
+		s := scanner{text: text}
+		p = s.problem(codeInverted, "the limits "+quote(text)+" begin above their end", "write the lower one first", 0, len(text))
 	}
-	if problem := p.physical(); problem != nil {
-		return Quantity{Text: text, Kind: k, Value: math.NaN()}, problem
+	if p != nil {
+		return none(k, text), p
 	}
-	return p.q, nil
+	return q, nil
 }
 
-// ParseOneOf reads text as the first of the kinds that has its unit.
+// ParseOneOf reads text as the first of the kinds that has its unit. When none
+// has, the problem is that of the first kind, unless a later one knows more
+// than that the unit is of another kind.
 func ParseOneOf(text string, kinds ...Kind) (Quantity, *Problem) {
 	var first *Problem
 	for _, k := range kinds {
@@ -36,15 +38,17 @@ func ParseOneOf(text string, kinds ...Kind) (Quantity, *Problem) {
 }
 
 // ParseRange reads two values joined by the word to; a missing first unit is
-// that of the second.
+// that of the second. Whether the first lies below the second is left to the
+// rules about ranges, which know what the range is for.
 func ParseRange(k Kind, text string) (lo, hi Quantity, p *Problem) {
-	q, p := Parse(k, text)
+	q, p := read(k, text)
 	if p != nil {
-		return lo, hi, p
+		return none(k, text), none(k, text), p
 	}
 	if q.Limits == nil || q.HasValue() || math.IsInf(q.Limits.Lower, 0) || math.IsInf(q.Limits.Upper, 0) {
 		s := scanner{text: text}
-		return lo, hi, s.problem(codeRange, quote(text)+" is no range", "write two values joined by the word to: 0 °C to 100 °C", 0, len(text))
+		return none(k, text), none(k, text), s.problem(codeRange, quote(text)+" is no range",
+			"write two values joined by the word to: 0 °C to 100 °C", 0, len(text))
 	}
 	lo, hi = q, q
 	lo.Value, hi.Value = q.Limits.Lower, q.Limits.Upper
@@ -52,16 +56,33 @@ func ParseRange(k Kind, text string) (lo, hi Quantity, p *Problem) {
 	return lo, hi, nil
 }
 
-type parser struct {
-	scanner
-	kind Kind
-	q    Quantity
+func none(k Kind, text string) Quantity {
+	return Quantity{Text: text, Kind: k, Value: math.NaN()}
 }
 
-// whole reads the whole text in one of its three forms.
+func read(k Kind, text string) (Quantity, *Problem) {
+	p := parser{scanner: scanner{text: text}, kind: k, q: none(k, text)}
+	p.skipBlank()
+	if problem := p.whole(); problem != nil {
+		return p.q, problem
+	}
+	return p.q, p.physical()
+}
+
+type parser struct {
+	scanner
+	kind  Kind
+	q     Quantity
+	inner bool // reads what stands behind a comma
+}
+
+// whole reads the whole text in one of its forms.
 func (p *parser) whole() *Problem {
 	if sided, upper := p.bound(); sided {
 		return p.oneSided(upper)
+	}
+	if p.standsPlusMinus() {
+		return p.aroundNothing()
 	}
 	open := p.take("(")
 	p.skipBlank()
@@ -76,15 +97,15 @@ func (p *parser) whole() *Problem {
 	if open {
 		return p.bracketed(first)
 	}
-	unit, problem := p.unit()
+	unit, has, problem := p.unit()
 	if problem != nil {
 		return problem
 	}
 	p.skipBlank()
-	if p.take("to ", "to\u00a0", "… ", "…") {
-		return p.rangeTo(first, unit)
+	if p.joined() {
+		return p.rangeTo(first, unit, has)
 	}
-	return p.valued(first, unit)
+	return p.valued(first, unit, has)
 }
 
 func (p *parser) noNumber() *Problem {
@@ -98,12 +119,13 @@ func example(k Kind) string {
 	return "43"
 }
 
-// bound reads <=, ≤, <, >=, ≥, > and tells whether the bound is an upper one.
+// bound reads <=, ≤, <, at most, >=, ≥, >, at least, and tells whether the
+// bound is an upper one.
 func (p *parser) bound() (sided, upper bool) {
 	switch {
-	case p.take("<=", "≤", "<"):
+	case p.take("<=", "≤", "<", "at most "):
 		return true, true
-	case p.take(">=", "≥", ">"):
+	case p.take(">=", "≥", ">", "at least "):
 		return true, false
 	}
 	return false, false
@@ -123,13 +145,19 @@ func (p *parser) oneSided(upper bool) *Problem {
 	if problem != nil {
 		return problem
 	}
-	p.q.Unit, p.q.Digits = unit, w.digits
+	p.written(w, unit)
 	if upper {
 		p.q.Limits = &Limits{math.Inf(-1), unit.ToSI(w.value)}
 	} else {
 		p.q.Limits = &Limits{unit.ToSI(w.value), math.Inf(1)}
 	}
 	return p.end()
+}
+
+// written keeps how a number was written.
+func (p *parser) written(w written, unit Unit) {
+	p.q.Unit, p.q.Digits, p.q.step = unit, w.digits, unit.difference(w.step)
+	p.q.fine = p.q.step
 }
 
 func (p *parser) end() *Problem {
@@ -141,100 +169,26 @@ func (p *parser) end() *Problem {
 	return nil
 }
 
-// unit reads the unit that stands here, nil when none does.
-func (p *parser) unit() (*Unit, *Problem) {
-	start := p.at
-	end := p.unitEnd()
-	spelled := strings.TrimRight(p.text[start:end], " \u00a0\u202f\u2009")
-	if spelled == "" {
-		return nil, nil
-	}
-	u, ok := FindUnit(p.kind, spelled)
-	if !ok {
-		return nil, p.wrongUnit(spelled, start)
-	}
-	p.at = end
-	return &u, nil
-}
-
-// unitEnd finds where a unit that begins here ends: before a ±, a sign with a
-// digit, the word to, or a bracket with k.
-func (p *parser) unitEnd() int {
-	text := p.text
-	for i := p.at; i < len(text); i++ {
-		switch c := text[i]; {
-		case c == ' ' && (strings.HasPrefix(text[i:], " to ") || isCoverage(text[i+1:])):
-			return i
-		case i == p.at && strings.HasPrefix(text[i:], "to "):
-			return i
-		case c == '+' && i+1 < len(text):
-			return i
-		case isCoverage(text[i:]):
-			return i
-		case strings.HasPrefix(text[i:], "±"), strings.HasPrefix(text[i:], "…"):
-			return i
-		}
-	}
-	return len(text)
-}
-
-func (p *parser) needUnit() (Unit, *Problem) {
-	u, problem := p.unit()
-	if problem != nil {
-		return Unit{}, problem
-	}
-	if u == nil {
-		return p.bare()
-	}
-	return *u, nil
-}
-
-// bare is the unit of a number without one: right for a ratio only.
-func (p *parser) bare() (Unit, *Problem) {
-	if p.kind == Ratio {
-		u, _ := FindUnit(Ratio, "1")
-		return u, nil
-	}
-	return Unit{}, p.problem(codeNoUnit, quote(p.text)+" has no unit; a "+string(p.kind)+" is asked for",
-		"write the unit that the source prints, for example "+NearUnit(p.kind, ""), 0, len(p.text))
-}
-
-func (p *parser) wrongUnit(spelled string, start int) *Problem {
-	end := start + len(spelled)
-	if kinds := KindsOf(spelled); len(kinds) > 0 {
-		return p.problem(codeOtherKind, quote(spelled)+" is a unit of "+string(kinds[0])+"; a "+string(p.kind)+" is asked for",
-			"write it in "+NearUnit(p.kind, spelled), start, end)
-	}
-	if strings.ContainsRune(spelled, ',') {
-		return p.problem(codeComma, "a comma stands in "+quote(p.text), "write a decimal point, and one value only", start, end)
-	}
-	return p.problem(codeUnit, quote(spelled)+" is no unit of "+string(p.kind)+" that is known", "write it in "+NearUnit(p.kind, spelled), start, end)
-}
-
-// valued finishes a value: unit, then an optional tolerance, with the unit
+// valued finishes a value: unit, then a tolerance or limits, with the unit
 // possibly standing behind the tolerance ("5 ± 0.2 µΩ·cm").
-func (p *parser) valued(w written, unit *Unit) *Problem {
+func (p *parser) valued(w written, unit Unit, has bool) *Problem {
 	t, problem := p.tolerance()
 	if problem != nil {
 		return problem
 	}
-	if unit == nil && t != nil && t.unit != nil {
-		unit = t.unit
-	}
-	if unit == nil {
-		u, problem := p.bare()
-		if problem != nil {
-			return problem
+	if !has && t != nil && t.has {
+		if unit, has = FindUnit(p.kind, t.unit.Symbol); !has {
+			return p.problem(codeNoUnit, quote(p.text)+" has no unit before its ±", "write both: 68 °F ± 4 Δ°F", 0, len(p.text))
 		}
-		unit = &u
 	}
-	p.q.Unit, p.q.Digits, p.q.Value = *unit, w.digits, unit.ToSI(w.value)
-	if t != nil {
-		if problem := p.apply(t, w); problem != nil {
+	if !has {
+		if unit, problem = p.bare(); problem != nil {
 			return problem
 		}
 	}
-	return p.end()
+	p.written(w, unit)
+	p.q.Value = unit.ToSI(w.value)
+	return p.tolerances(t, w)
 }
 
 // bracketed reads "(5 ± 0.2) µΩ·cm" after its first number.
@@ -252,20 +206,21 @@ func (p *parser) bracketed(w written) *Problem {
 	if problem != nil {
 		return problem
 	}
-	p.q.Unit, p.q.Digits, p.q.Value = unit, w.digits, unit.ToSI(w.value)
+	p.written(w, unit)
+	p.q.Value = unit.ToSI(w.value)
 	p.skipBlank()
 	if k, ok, problem := p.coverage(); problem != nil {
 		return problem
 	} else if ok {
 		t.k = k
 	}
-	if problem := p.apply(t, w); problem != nil {
-		return problem
-	}
-	return p.end()
+	return p.tolerances(t, w)
 }
 
-func (p *parser) rangeTo(first written, unit *Unit) *Problem {
+// joined takes what joins the ends of a range.
+func (p *parser) joined() bool { return p.take("to ", "to\u00a0", "to\u202f", "…", "...") }
+
+func (p *parser) rangeTo(first written, unit Unit, has bool) *Problem {
 	p.skipBlank()
 	second, ok, problem := p.number()
 	if problem != nil {
@@ -275,38 +230,44 @@ func (p *parser) rangeTo(first written, unit *Unit) *Problem {
 		return p.problem(codeRange, "after to no number stands in "+quote(p.text), "write two values and a unit: -40 to 85 °C", p.at, len(p.text))
 	}
 	p.skipBlank()
-	last, problem := p.unit()
-	if problem != nil {
-		return problem
-	}
+	last, hasLast, problem := p.unit()
 	switch {
-	case last == nil && unit == nil:
-		u, problem := p.bare()
-		if problem != nil {
+	case problem != nil:
+		return problem
+	case !hasLast && !has:
+		if last, problem = p.bare(); problem != nil {
 			return problem
 		}
-		last, unit = &u, &u
-	case last == nil:
+		unit = last
+	case !hasLast:
 		last = unit
-	case unit == nil:
+	case !has:
 		unit = last
 	}
-	p.q.Unit, p.q.Digits = *last, max(first.digits, second.digits)
+	p.written(second, last)
+	p.q.Digits, p.q.step = max(first.digits, second.digits), math.Min(p.q.step, unit.difference(first.step))
 	p.q.Limits = &Limits{unit.ToSI(first.value), last.ToSI(second.value)}
 	return p.end()
 }
 
 // physical refuses what no unit allows.
 func (p *parser) physical() *Problem {
-	if p.kind != Temperature {
-		return nil
-	}
 	low := p.q.Value
-	if p.q.Limits != nil {
-		low = math.Min(p.q.Limits.Lower, p.q.Limits.Upper)
+	if l := p.q.Limits; l != nil {
+		low = math.Min(l.Lower, l.Upper)
+		if math.IsInf(l.Lower, 1) || math.IsInf(l.Upper, -1) || (math.IsInf(l.Lower, 0) && math.IsInf(l.Upper, 0)) {
+			return p.tooLarge()
+		}
 	}
-	if low < -1e-9 && !math.IsInf(low, 0) {
+	if u := p.q.Uncertainty; u != nil && (math.IsInf(u.Plus, 0) || math.IsInf(u.Minus, 0)) || math.IsInf(p.q.Value, 0) {
+		return p.tooLarge()
+	}
+	if p.kind == Temperature && low < -1e-9 && !math.IsInf(low, 0) {
 		return p.problem(codeBelowZero, quote(p.text)+" lies below absolute zero", "look at the unit: kelvin or °C?", 0, len(p.text))
 	}
 	return nil
+}
+
+func (p *parser) tooLarge() *Problem {
+	return p.problem(codeNotFinite, quote(p.text)+" is too large to be a value", "write the number that the source prints", 0, len(p.text))
 }

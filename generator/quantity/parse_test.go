@@ -5,7 +5,9 @@ import (
 	"testing"
 )
 
-func near(a, b float64) bool { return a == b || math.Abs(a-b) <= 1e-12*math.Max(math.Abs(a), math.Abs(b)) }
+func near(a, b float64) bool {
+	return a == b || math.Abs(a-b) <= 1e-12*math.Max(math.Abs(a), math.Abs(b))
+}
 
 func TestParseForms(t *testing.T) {
 	inf := math.Inf(1)

@@ -74,23 +74,20 @@ func (u Unit) with(number string) string {
 	return number + NarrowSpace + u.Symbol
 }
 
-// DigitsAfterConversion is how many significant digits of q in unit u its
-// source justifies: as many as were written.
-func DigitsAfterConversion(q Quantity, u Unit) int { return max(1, q.Digits) }
-
-// In prints q in unit u: value and ±, or its limits, with no more digits than
-// were written.
+// In prints q in unit u with no more digits than its source justifies: the
+// value, "± x unit (k=2)" when it has an uncertainty, and its limits behind a
+// comma; a quantity without a value prints its limits alone. Parse reads all
+// of these back.
 func (q Quantity) In(u Unit) string {
-	n := DigitsAfterConversion(q, u)
 	if !q.HasValue() {
-		return q.limitsIn(u, n)
+		return q.limitsIn(u)
 	}
-	text := u.Format(q.Value, n)
-	if q.Limits != nil {
-		text += ", " + q.limitsIn(u, n+1)
-	}
+	text := u.Format(q.Value, DigitsAfterConversion(q, u))
 	if q.Uncertainty != nil {
 		text += " " + q.uncertaintyIn(u)
+	}
+	if q.Limits != nil {
+		text += ", " + q.limitsIn(u)
 	}
 	return text
 }
@@ -99,7 +96,7 @@ func (q Quantity) In(u Unit) string {
 func (q Quantity) Band(u Unit) string {
 	var parts []string
 	if q.Limits != nil {
-		parts = append(parts, q.limitsIn(u, max(1, q.Digits)+boolInt(q.HasValue())))
+		parts = append(parts, q.limitsIn(u))
 	}
 	if q.Uncertainty != nil {
 		parts = append(parts, q.uncertaintyIn(u))
@@ -107,34 +104,33 @@ func (q Quantity) Band(u Unit) string {
 	return strings.Join(parts, "; ")
 }
 
-func boolInt(b bool) int {
-	if b {
-		return 1
-	}
-	return 0
-}
-
-func (q Quantity) limitsIn(u Unit, digits int) string {
+// limitsIn prints limits, rounded inward where they are rounded.
+func (q Quantity) limitsIn(u Unit) string {
 	if q.Limits == nil {
 		return ""
 	}
 	lo, hi := u.FromSI(q.Limits.Lower), u.FromSI(q.Limits.Upper)
+	place, coarsest := q.limitPlace(u, lo, hi)
+	l, h := inward(lo, hi, place)
+	for place < coarsest && wholeTen(l) && wholeTen(h) {
+		place, l, h = place+1, l/10, h/10
+	}
 	switch {
 	case math.IsInf(lo, -1):
-		return u.with("at most " + trimmedNumber(hi, digits))
+		return u.with("at most " + counted(h, place))
 	case math.IsInf(hi, 1):
-		return u.with("at least " + trimmedNumber(lo, digits))
+		return u.with("at least " + counted(l, place))
 	}
-	return u.with(trimmedNumber(lo, digits) + " to " + trimmedNumber(hi, digits))
+	return u.with(counted(l, place) + " to " + counted(h, place))
 }
 
-// trimmedNumber prints a limit without zeros that only the extra digit added.
-func trimmedNumber(x float64, digits int) string {
-	s := Number(x, digits)
-	if strings.Contains(s, ".") && !strings.Contains(s, "×") {
-		s = strings.TrimSuffix(strings.TrimRight(s, "0"), ".")
-	}
-	return s
+// wholeTen tells whether an end loses nothing with one place less.
+func wholeTen(count float64) bool { return math.IsInf(count, 0) || math.Mod(count, 10) == 0 }
+
+// counted prints count units of the decimal place.
+func counted(count float64, place int) string {
+	x := scaleTen(count, place)
+	return Number(x, digitsAt(x, math.Pow10(place)))
 }
 
 // uncertaintyIn prints an expanded uncertainty with two digits (JCGM 100,
@@ -145,22 +141,17 @@ func (q Quantity) uncertaintyIn(u Unit) string {
 	if math.Abs(plus-minus) > 1e-9*math.Abs(plus) {
 		text = "+" + Number(plus, 2) + "/−" + Number(minus, 2)
 	}
+	u.Symbol = u.differenceSymbol()
 	return u.with(text) + " (k=" + strconv.FormatFloat(q.Uncertainty.K, 'g', -1, 64) + ")"
 }
 
-// RoundUncertainty rounds an uncertainty to two significant digits and the
-// value to the same place (JCGM 100, 7.2.6); decimals is that place.
-func RoundUncertainty(value, uncertainty float64) (v, u string, decimals int) {
-	if !(uncertainty > 0) {
-		return Number(value, 6), "0", 0
+// differenceSymbol is the unit of a ±: of a temperature, a difference.
+func (u Unit) differenceSymbol() string {
+	switch {
+	case u.Kind != Temperature:
+		return u.Symbol
+	case u.Symbol == "°F":
+		return "Δ°F"
 	}
-	decimals = 1 - exponentOf(uncertainty, 2)
-	return Fixed(roundTo(value, decimals), max(0, decimals)), Fixed(roundTo(uncertainty, decimals), max(0, decimals)), decimals
-}
-
-// RoundInward rounds a pair of acceptance limits to decimals so that the
-// printed interval lies inside the true one.
-func RoundInward(lo, hi float64, decimals int) (float64, float64) {
-	p := math.Pow(10, float64(decimals))
-	return math.Ceil(lo*p-1e-9) / p, math.Floor(hi*p+1e-9) / p
+	return "K"
 }

@@ -1,6 +1,7 @@
 package quantity
 
 import (
+	"bytes"
 	"math"
 	"strconv"
 	"strings"
@@ -36,13 +37,13 @@ func (s *scanner) take(prefixes ...string) bool {
 	return false
 }
 
-// number is one number as written.
+// written is one number as written.
 type written struct {
 	value  float64
-	digits int // significant digits
+	digits int     // significant digits
+	step   float64 // one unit in the last written place: 0.01 for 8.40
 	start  int
 	end    int
-	signed bool
 }
 
 // number reads a number; ok is false when none stands here. A comma within
@@ -53,9 +54,8 @@ func (s *scanner) number() (w written, ok bool, p *Problem) {
 	buf := b[:0]
 	switch {
 	case s.take("-", "−"):
-		buf, w.signed = append(buf, '-'), true
+		buf = append(buf, '-')
 	case s.take("+"):
-		w.signed = true
 	}
 	from := len(buf)
 	buf, p = s.digits(buf)
@@ -67,8 +67,10 @@ func (s *scanner) number() (w written, ok bool, p *Problem) {
 		return w, false, nil
 	}
 	w.digits = significant(buf[from:])
+	plain := len(buf)
 	buf = s.exponent(buf)
 	w.end = s.at
+	w.step = lastPlace(buf[from:plain], buf[plain:])
 	x, err := strconv.ParseFloat(string(buf), 64)
 	if err != nil || math.IsInf(x, 0) {
 		return w, false, s.problem(codeNotFinite, "the number "+quote(s.text[w.start:w.end])+" is not finite", "write the number that the source prints", w.start, w.end)
@@ -187,6 +189,19 @@ func significant(digits []byte) int {
 		}
 	}
 	return max(1, n)
+}
+
+// lastPlace is one unit in the last place of a plain number with an exponent
+// such as e-3, or none.
+func lastPlace(plain, exponent []byte) float64 {
+	decimals, power := 0, 0
+	if i := bytes.IndexByte(plain, '.'); i >= 0 {
+		decimals = len(plain) - i - 1
+	}
+	if len(exponent) > 1 {
+		power, _ = strconv.Atoi(string(exponent[1:]))
+	}
+	return math.Pow10(power - decimals)
 }
 
 // problem places a problem on the bytes from start to end of the text.

@@ -1,6 +1,10 @@
 package quantity
 
-import "math"
+import (
+	"fmt"
+	"math"
+	"strings"
+)
 
 // row is one unit: symbol, ASCII spelling, UCUM code, factor to SI, offset,
 // and other spellings separated by |.
@@ -21,6 +25,7 @@ const (
 	circularMil = math.Pi / 4 * 25.4e-6 * 25.4e-6
 	squareMil   = 25.4e-6 * 25.4e-6
 	pound       = 0.45359237
+	psi         = pound * 9.80665 / (inch * inch) // pound-force per square inch, standard gravity (CGPM 1901)
 	// iacs is the conductivity of the International Annealed Copper Standard
 	// at 20 °C: 58 MS/m exactly (IEC publication 28, 1925).
 	iacs = 58e6
@@ -32,16 +37,16 @@ var table = []struct {
 	rows []row
 }{
 	{Resistivity, []row{
-		{"µΩ·cm", "uohm cm", "uOhm.cm", 1e-8, 0, "microohm cm|uohm-cm|µΩcm"},
+		{"µΩ·cm", "uohm cm", "uOhm.cm", 1e-8, 0, "microohm cm|uohm-cm|microhm cm|microhm-cm|micro-ohm cm|micro-ohm-cm|microohm-cm"},
 		{"Ω·mm²/m", "ohm mm2/m", "Ohm.mm2/m", 1e-6, 0, "ohm sqmm/m|ohm mm^2/m"},
-		{"µΩ·m", "uohm m", "uOhm.m", 1e-6, 0, "microohm m|uohm-m"},
+		{"µΩ·m", "uohm m", "uOhm.m", 1e-6, 0, "microohm m|uohm-m|microhm m|micro-ohm m"},
 		{"nΩ·m", "nohm m", "nOhm.m", 1e-9, 0, "nanoohm m"},
 		{"mΩ·m", "mohm m", "mOhm.m", 1e-3, 0, ""},
 		{"mΩ·cm", "mohm cm", "mOhm.cm", 1e-5, 0, ""},
 		{"Ω·m", "ohm m", "Ohm.m", 1, 0, "ohm-m|ohm m2/m"},
 		{"Ω·cm", "ohm cm", "Ohm.cm", 1e-2, 0, "ohm-cm"},
-		{"µΩ·in", "uohm in", "uOhm.[in_i]", 1e-6 * inch, 0, "microohm in|uohm inch|µΩ·inch"},
-		{"10⁻⁸ Ω·m", "1e-8 ohm m", "10*-8.Ohm.m", 1e-8, 0, "1e-8 Ω·m|10^-8 ohm m|×10⁻⁸ Ω·m"},
+		{"µΩ·in", "uohm in", "uOhm.[in_i]", 1e-6 * inch, 0, "microohm in|uohm inch|microhm in|microhm inch"},
+		{"10⁻⁸ Ω·m", "1e-8 ohm m", "10*-8.Ohm.m", 1e-8, 0, "10^-8 ohm m|x10^-8 ohm m|×10⁻⁸ Ω·m"},
 		{"Ω·cmil/ft", "ohm cmil/ft", "Ohm.[cml_i]/[ft_i]", circularMil / foot, 0, "ohm circularmil/ft|ohm cmil per ft|Ω·CM/ft"},
 		{"Ω·mil²/ft", "ohm mil2/ft", "Ohm.[mil_i]2/[ft_i]", squareMil / foot, 0, "ohm sqmil/ft|Ω·sq mil/ft|ohm sq mil/ft"},
 	}},
@@ -84,8 +89,8 @@ var table = []struct {
 		{"°F", "degF", "[degF]", 5.0 / 9, 459.67, "F|deg F"},
 	}},
 	{TemperatureDifference, []row{
-		{"K", "K", "K", 1, 0, "°C|degC|delta°C|delta degC|delta K|C"}, {"mK", "mK", "mK", 1e-3, 0, ""},
-		{"Δ°F", "delta degF", "[degF]", 5.0 / 9, 0, "°F|degF|deltaF|F"},
+		{"K", "K", "K", 1, 0, "Δ°C|delta degC|deltaC|ΔK|kelvin"}, {"mK", "mK", "mK", 1e-3, 0, ""},
+		{"Δ°F", "delta degF", "[degF]", 5.0 / 9, 0, "deltaF"},
 	}},
 	{Density, []row{
 		{"g/cm³", "g/cm3", "g/cm3", 1e3, 0, "kg/dm³|kg/l|g/ml|t/m³|Mg/m³"}, {"kg/m³", "kg/m3", "kg/m3", 1, 0, ""},
@@ -105,7 +110,7 @@ var table = []struct {
 		{"W/cm²", "W/cm2", "W/cm2", 1e4, 0, ""}, {"W/m²", "W/m2", "W/m2", 1, 0, ""}, {"W/in²", "W/in2", "W/[in_i]2", 1 / (inch * inch), 0, "W/sqin|W/sq in"},
 	}},
 	{CurrentDensity, []row{{"A/mm²", "A/mm2", "A/mm2", 1e6, 0, ""}, {"A/m²", "A/m2", "A/m2", 1, 0, ""}, {"A/cm²", "A/cm2", "A/cm2", 1e4, 0, ""}}},
-	{Stress, []row{{"MPa", "MPa", "MPa", 1e6, 0, "N/mm²|N/mm2"}, {"GPa", "GPa", "GPa", 1e9, 0, ""}, {"Pa", "Pa", "Pa", 1, 0, ""}}},
+	{Stress, []row{{"MPa", "MPa", "MPa", 1e6, 0, "N/mm²|N/mm2"}, {"GPa", "GPa", "GPa", 1e9, 0, ""}, {"Pa", "Pa", "Pa", 1, 0, ""}, {"ksi", "ksi", "k[psi]", 1e3 * psi, 0, ""}, {"psi", "psi", "[psi]", psi, 0, ""}}},
 	{Length, []row{
 		{"mm", "mm", "mm", 1e-3, 0, ""}, {"m", "m", "m", 1, 0, ""}, {"cm", "cm", "cm", 1e-2, 0, ""}, {"µm", "um", "um", 1e-6, 0, "micron"},
 		{"km", "km", "km", 1e3, 0, ""}, {"in", "in", "[in_i]", inch, 0, "inch|\""}, {"mil", "mil", "[mil_i]", inch / 1000, 0, "thou"}, {"ft", "ft", "[ft_i]", foot, 0, "foot|feet"},
@@ -119,7 +124,7 @@ var table = []struct {
 	{Voltage, []row{{"V", "V", "V", 1, 0, ""}, {"mV", "mV", "mV", 1e-3, 0, ""}, {"µV", "uV", "uV", 1e-6, 0, ""}, {"kV", "kV", "kV", 1e3, 0, ""}}},
 	{Power, []row{{"W", "W", "W", 1, 0, ""}, {"mW", "mW", "mW", 1e-3, 0, ""}, {"kW", "kW", "kW", 1e3, 0, ""}}},
 	{Time, []row{{"s", "s", "s", 1, 0, ""}, {"ms", "ms", "ms", 1e-3, 0, ""}, {"min", "min", "min", 60, 0, ""}, {"h", "h", "h", 3600, 0, ""}}},
-	{Ratio, []row{{"", "1", "1", 1, 0, ""}, {"%", "%", "%", 1e-2, 0, "percent"}, {"ppm", "ppm", "[ppth]", 1e-6, 0, ""}, {"‰", "permil", "", 1e-3, 0, ""}}},
+	{Ratio, []row{{"", "1", "1", 1, 0, ""}, {"%", "%", "%", 1e-2, 0, "percent"}, {"ppm", "ppm", "[ppm]", 1e-6, 0, ""}, {"‰", "permil", "[ppth]", 1e-3, 0, ""}}},
 	{Price, prices()},
 }
 
@@ -127,20 +132,26 @@ var table = []struct {
 func coefficients(n int) []row {
 	power := [...]string{"", "", "²", "³", "⁴"}[n]
 	ascii := [...]string{"", "", "2", "3", "4"}[n]
-	f := math.Pow(1.8, float64(n))
 	minus := [...]string{"", "⁻¹", "⁻²", "⁻³", "⁻⁴"}[n]
-	caret := [...]string{"", "^-1", "^-2", "^-3", "^-4"}[n]
-	ucum := [...]string{"", "K-1", "K-2", "K-3", "K-4"}[n]
+	caret := fmt.Sprintf("^-%d", n)
+	ucum := fmt.Sprintf("K-%d", n)
+	fahrenheit := math.Pow(1.8, float64(n))
 	per := func(s string) string {
-		return s + "/°C" + power + "|" + s + "/degC" + ascii + "|" + s + "*K" + caret + "|" + s + "·K" + minus + "|" + s + "/C" + ascii
+		return strings.Join([]string{s + "/°C" + power, s + "/C" + ascii, s + "·K" + minus, s + "*K" + caret, s + "·°C" + minus, s + "*degC" + caret}, "|")
 	}
-	perF := func(s string) string { return s + "/degF" + ascii + "|" + s + "/F" + ascii }
+	perF := func(s string) string { return s + "/F" + ascii + "|" + s + "·°F" + minus + "|" + s + "*degF" + caret }
+	parts := per("ppm") + "|" + per("10⁻⁶") + "|" + per("10^-6") + "|" + per("1e-6") + "|10⁻⁶/K" + power + "|10^-6/K" + power + "|1e-6/K" + power
+	if n == 1 {
+		parts += "|µm/(m·K)|µm/m/K|µm/m·K|µm/(m·°C)|µm/m/°C|µm/m·°C" // as expansions are printed
+	}
 	return []row{
-		{"ppm/K" + power, "ppm/K" + ascii, "[ppth].K-" + ucum[2:], 1e-6, 0, per("ppm")},
-		{"/K" + power, "/K" + ascii, ucum, 1, 0, per("") + "|" + per("1") + "|1/K" + ascii + "|K" + minus + "|K" + caret + "|°C" + minus},
+		{"ppm/K" + power, "ppm/K" + ascii, "[ppm]." + ucum, 1e-6, 0, parts},
+		{"/K" + power, "/K" + ascii, ucum, 1, 0, per("") + "|" + per("1") + "|1/K" + ascii + "|K" + minus + "|K" + caret + "|°C" + minus + "|degC" + caret},
 		{"%/K" + power, "%/K" + ascii, "%." + ucum, 1e-2, 0, per("%")},
-		{"/°F" + power, "/degF" + ascii, "", f, 0, perF("") + "|" + perF("1") + "|1/°F" + power},
-		{"ppm/°F" + power, "ppm/degF" + ascii, "", 1e-6 * f, 0, perF("ppm")},
+		{"10⁻³/K" + power, "1e-3/K" + ascii, "10*-3." + ucum, 1e-3, 0, per("10⁻³") + "|" + per("10^-3") + "|10^-3/K" + power},
+		{"/°F" + power, "/degF" + ascii, "", fahrenheit, 0, perF("") + "|" + perF("1") + "|1/°F" + power + "|°F" + minus},
+		{"ppm/°F" + power, "ppm/degF" + ascii, "", 1e-6 * fahrenheit, 0, perF("ppm")},
+		{"%/°F" + power, "%/degF" + ascii, "", 1e-2 * fahrenheit, 0, perF("%")},
 	}
 }
 
@@ -148,7 +159,7 @@ func coefficients(n int) []row {
 // never converted here.
 func prices() []row {
 	var list []row
-	for _, c := range []string{"EUR", "USD", "GBP", "CHF", "SEK", "NOK", "DKK", "JPY"} {
+	for _, c := range []string{"EUR", "USD", "GBP", "CHF", "SEK", "NOK", "DKK", "JPY", "PLN", "CZK", "CAD", "AUD", "CNY", "INR", "KRW", "SGD"} {
 		for _, per := range []string{"kg", "m", "piece", "sheet"} {
 			list = append(list, row{c + "/" + per, c + "/" + per, "", 1, 0, ""})
 		}

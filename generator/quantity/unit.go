@@ -1,9 +1,12 @@
 package quantity
 
-import "strings"
+import (
+	"strings"
 
-// Unit is one unit of a kind: SI = (x + offset)·factor, or factor/x for the
-// reciprocal ones.
+	"ohmfolio/generator/place"
+)
+
+// Unit is one unit of a kind: SI = (x + offset)·factor.
 type Unit struct {
 	Symbol string // typographic, "µΩ·cm"; "" for a plain ratio
 	ASCII  string // "uohm cm"
@@ -59,11 +62,32 @@ func KindsOf(spelled string) []Kind {
 	return list
 }
 
-// NearUnit gives the usual units of a kind, for messages.
+// NearUnit tells what a spelling that is no unit of k was probably meant for:
+// the near unit of k for a typo, or the name of the kind that it is a unit of;
+// "" when neither is found.
 func NearUnit(k Kind, spelled string) string {
+	if _, ok := FindUnit(k, spelled); ok {
+		return spelled
+	}
+	if kinds := KindsOf(spelled); len(kinds) > 0 {
+		return string(kinds[0])
+	}
+	symbols := map[string]string{}
+	var known []string
+	for _, u := range Units(k) {
+		for _, s := range []string{u.Symbol, u.ASCII} {
+			folded := normalise(s)
+			known, symbols[folded] = append(known, folded), u.Symbol
+		}
+	}
+	return symbols[place.Near(normalise(spelled), known)]
+}
+
+// usual gives the first units of a kind, for messages.
+func usual(k Kind) string {
 	var list []string
-	for i, u := range Units(k) {
-		if i < 3 && u.Symbol != "" {
+	for _, u := range Units(k) {
+		if len(list) < 3 && u.Symbol != "" {
 			list = append(list, u.Symbol)
 		}
 	}
@@ -79,7 +103,7 @@ func buildSpellings() map[Kind]map[string]Unit {
 		m := map[string]Unit{}
 		for _, r := range g.rows {
 			u := r.unit(g.kind)
-			for _, s := range append([]string{r.symbol, r.ascii}, strings.Split(r.also, "|")...) {
+			for _, s := range r.spellings(g.kind) {
 				if s != "" || r.symbol == "" {
 					m[s], m[normalise(s)] = u, u
 				}
@@ -90,11 +114,23 @@ func buildSpellings() map[Kind]map[string]Unit {
 	return all
 }
 
+// spellings are all the ways to write a row. The code of Ω per square is that
+// of Ω alone, which is no sheet resistance to a reader.
+func (r row) spellings(k Kind) []string {
+	list := append([]string{r.symbol, r.ascii}, strings.Split(r.also, "|")...)
+	if k == SheetResistance || r.ucum == "" {
+		return list
+	}
+	return append(list, r.ucum)
+}
+
 // replacer folds the spellings of one thing into one.
 var replacer = strings.NewReplacer(
-	"µ", "u", "μ", "u", "Ω", "ohm", "Ω", "ohm", "°", "deg", "º", "deg", "℃", "degC", "℉", "degF", "□", "sq", "Δ", "delta",
-	"·", "*", "⋅", "*", "×", "*", ".", "*", "⁻", "^-", "²", "^2", "³", "^3", "⁴", "^4", "¹", "^1",
-	" ", "", "\u00a0", "", "\u202f", "", "\u2009", "", "**", "^", "−", "-", "ohms", "ohm", "Ohm", "ohm", "OHM", "ohm",
+	"\u00b5", "u", "\u03bc", "u", "\u03a9", "ohm", "\u2126", "ohm", // µ and Ω, two code points each
+	"\u00b0", "deg", "\u00ba", "deg", "\u02da", "deg", "℃", "degC", "℉", "degF", // °, º and ˚
+	"□", "sq", "◻", "sq", "\u0394", "delta", "\u2206", "delta", // Δ, two code points
+	"·", "*", "⋅", "*", "×", "*", ".", "*", "²", "^2", "³", "^3", "⁴", "^4", "⁻¹", "^-1", "⁻²", "^-2", "⁻³", "^-3", "⁻⁴", "^-4", "⁻⁸", "^-8", "⁻⁶", "^-6",
+	" ", "", "\t", "", "\u00a0", "", "\u202f", "", "\u2009", "", "**", "^", "−", "-", "ohms", "ohm", "Ohm", "ohm", "OHM", "ohm",
 )
 
 // normalise folds a spelling: ASCII letters, * as product, ^ as power, no
@@ -102,7 +138,6 @@ var replacer = strings.NewReplacer(
 // "uohm*cm" and "µΩ·cm" are one.
 func normalise(s string) string {
 	s = replacer.Replace(s)
-	s = strings.ReplaceAll(s, "^-^", "^-")
 	s = strings.ReplaceAll(s, "*", "")
 	for _, p := range [...][2]string{{"^2", "2"}, {"^3", "3"}, {"^4", "4"}, {"deltadeg", "delta"}, {"degK", "K"}} {
 		s = strings.ReplaceAll(s, p[0], p[1])
