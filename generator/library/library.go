@@ -12,13 +12,13 @@ import (
 // It is read-only after Load and safe for use by several goroutines.
 type Library struct {
 	Folder    string
-	Settings  Settings            // content/reference.yaml
-	Materials []*material.Record  // sorted by ID; unreadable ones are left out
-	Sources   map[string]*Source  // by ID
-	SourceIDs []string            // sorted
-	Documents []*Document         // home, guides, reports in reading order
+	Settings  Settings           // content/reference.yaml
+	Materials []*material.Record // sorted by ID; unreadable ones are left out
+	Sources   map[string]*Source // by ID
+	SourceIDs []string           // sorted
+	Documents []*Document        // home, guides, reports in reading order
 	Offers    []Offer
-	Findings  []place.Finding     // what reading found, sorted
+	Findings  []place.Finding // what reading found, sorted
 
 	byID map[string]*material.Record
 }
@@ -26,23 +26,23 @@ type Library struct {
 // Settings is content/reference.yaml.
 type Settings struct {
 	Title, Organisation, Contact, Address string
-	Paper          []string // "A4", "Letter"
-	Units          Units
-	DocumentPrefix string
-	Guides, Reports []string // reading order, stems
-	PDF            bool
+	Paper                                 []string // "A4", "Letter"
+	Units                                 Units
+	DocumentPrefix                        string
+	Guides, Reports                       []string // reading order, stems
+	PDF                                   bool
 }
 
 // A Source is one entry of materials/sources.yaml.
 type Source struct {
 	ID, Kind, Author, Title, Number, Publisher, Edition, Year, Where string
-	Checked      material.Checked
-	CheckedDate  string
-	CheckedBy    string
-	SupersededBy string
-	Note         string
-	Invented     bool
-	Position     place.Position
+	Checked                                                          material.Checked
+	CheckedDate                                                      string
+	CheckedBy                                                        string
+	SupersededBy                                                     string
+	Note                                                             string
+	Invented                                                         bool
+	Position                                                         place.Position
 }
 
 // A Document is one Markdown page of content/.
@@ -56,6 +56,6 @@ type Document struct {
 // An Offer is one row of materials/offers.csv, as written.
 type Offer struct {
 	Material, Supplier, Form, Size, Price, Currency, Per, Quantity, Date, ValidUntil string
-	MetalBase, Certificate, ResistivityTolerance, Note                              string
-	Position place.Position
+	MetalBase, Certificate, ResistivityTolerance, Note                               string
+	Position                                                                         place.Position
 }

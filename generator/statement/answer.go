@@ -4,7 +4,6 @@ import (
 	"fmt"
 	"math"
 
-	"ohmfolio/generator/curve"
 	"ohmfolio/generator/library"
 	"ohmfolio/generator/material"
 	"ohmfolio/generator/quantity"
@@ -213,7 +212,10 @@ func fill(a *Answer, set *material.DataSet, told *material.Told, q Question, uni
 	if q.Quantity == AskConductivity {
 		convert = func(x float64) float64 { return quantity.Round12(unit.FromSI(1 / x)) }
 	}
-	a.Digits = digitsOf(set, q.Quantity)
+	a.Digits = set.Digits()
+	if e.Ratio {
+		a.Digits = set.RatioDecimals() + 1
+	}
 	v, ok := e.At(q.At)
 	if ok {
 		x := convert(v)
@@ -225,7 +227,7 @@ func fill(a *Answer, set *material.DataSet, told *material.Told, q Question, uni
 		a.Limits = &Interval{Lower: lo, Upper: hi, Covers: limitCovers(told), NotCovered: limitNotCovered(told)}
 		a.Band = "limits " + unit.Format(unit.ToSI(lo), a.Digits+1) + " to " + unit.Format(unit.ToSI(hi), a.Digits+1)
 	}
-	if ok && told.Uncertainty != nil && !a.Extrapolated {
+	if ok && told.Uncertainty != nil && !a.Extrapolated && (!e.Ratio || e.Reference == set.RatioReference) {
 		fillUncertainty(a, told, v, q.At, convert, unit)
 	}
 }

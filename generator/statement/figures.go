@@ -4,6 +4,7 @@ import (
 	"ohmfolio/generator/curve"
 	"ohmfolio/generator/figure"
 	"ohmfolio/generator/material"
+	"ohmfolio/generator/quantity"
 )
 
 // curvePoints is how many points a printed curve has: at 640 px a step is

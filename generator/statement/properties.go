@@ -55,7 +55,7 @@ func valueAndBand(q quantity.Quantity) (value, band string) {
 		value = quantity.Number(q.Unit.FromSI(q.Value), q.Digits)
 	}
 	if q.Uncertainty != nil || q.Limits != nil {
-		band = bandText(q)
+		band = q.Band(q.Unit)
 	}
 	if value == "" {
 		value, band = band, "limits without a nominal"

@@ -7,6 +7,7 @@ import (
 	"ohmfolio/generator/curve"
 	"ohmfolio/generator/library"
 	"ohmfolio/generator/material"
+	"ohmfolio/generator/quantity"
 )
 
 // SlopeAnswer is the slope (1/R)dR/dT in ppm/K.
