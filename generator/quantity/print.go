@@ -25,7 +25,7 @@ func Number(x float64, digits int) string {
 
 // exponentOf is the decimal exponent of x after rounding to digits.
 func exponentOf(x float64, digits int) int {
-	s := strconv.FormatFloat(math.Abs(x), 'e', digits-1, 64)
+	s := strconv.FormatFloat(math.Abs(halfAway(x)), 'e', digits-1, 64)
 	e, _ := strconv.Atoi(s[strings.IndexByte(s, 'e')+1:])
 	return e
 }
@@ -40,7 +40,7 @@ func roundTo(x float64, decimals int) float64 {
 }
 
 func scientific(x float64, digits int) string {
-	s := strconv.FormatFloat(x, 'e', digits-1, 64)
+	s := strconv.FormatFloat(halfAway(x), 'e', digits-1, 64)
 	mantissa, exponent, _ := strings.Cut(s, "e")
 	e, _ := strconv.Atoi(exponent)
 	return strings.Replace(mantissa, "-", "−", 1) + "×10" + superscript(e)

@@ -7,7 +7,7 @@ import "math"
 // ratio, to one unit in the last place that the author wrote: 36 ft are
 // 11.0 m (the example of NIST SP 811, B.7, quoted from memory), 20 °C are
 // 293 K and 0.43 µΩ·m are 260 Ω·cmil/ft. A ± written to finer places tells
-// that the value is known so far: 1 mm ± 0.02 mm are 39.4 mil. In the unit of
+// that the value is known so far: 1 mm ± 0.02 mm are 39 mil. In the unit of
 // the author it is the number of digits written. Of limits without a value it is that of the end
 // further from zero.
 func DigitsAfterConversion(q Quantity, u Unit) int {

@@ -100,11 +100,11 @@ var table = []struct {
 		{"µV/K", "uV/K", "uV/K", 1e-6, 0, "µV/°C|uV/degC"}, {"mV/K", "mV/K", "mV/K", 1e-3, 0, "mV/°C|mV/degC"}, {"V/K", "V/K", "V/K", 1, 0, "V/°C"},
 	}},
 	{ThermalConductivity, []row{
-		{"W/(m·K)", "W/(m K)", "W/(m.K)", 1, 0, "W/mK|W/(m*K)|W/m/K|W/(m·°C)|W/(m degC)"},
+		{"W/(m·K)", "W/(m K)", "W/(m.K)", 1, 0, "W/mK|W/(m*K)|W/m/K|W·m⁻¹·K⁻¹|W/(m·°C)|W/(m degC)"},
 		{"W/(cm·K)", "W/(cm K)", "W/(cm.K)", 100, 0, "W/cmK|W/(cm·°C)"},
 	}},
 	{SpecificHeat, []row{
-		{"J/(kg·K)", "J/(kg K)", "J/(kg.K)", 1, 0, "J/kgK|J/kg/K|J/(kg·°C)"}, {"J/(g·K)", "J/(g K)", "J/(g.K)", 1e3, 0, "J/gK|kJ/(kg·K)|J/(g·°C)"},
+		{"J/(kg·K)", "J/(kg K)", "J/(kg.K)", 1, 0, "J/kgK|J/kg/K|J·kg⁻¹·K⁻¹|J/(kg·°C)"}, {"J/(g·K)", "J/(g K)", "J/(g.K)", 1e3, 0, "J/gK|kJ/(kg·K)|J/(g·°C)"},
 	}},
 	{SurfaceLoad, []row{
 		{"W/cm²", "W/cm2", "W/cm2", 1e4, 0, ""}, {"W/m²", "W/m2", "W/m2", 1, 0, ""}, {"W/in²", "W/in2", "W/[in_i]2", 1 / (inch * inch), 0, "W/sqin|W/sq in"},

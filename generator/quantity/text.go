@@ -34,14 +34,24 @@ func trimmed(x float64) string {
 	return s
 }
 
-// Fixed prints x with a given number of decimals and a true minus; a number
-// that rounds to zero has no sign.
+// Fixed prints x with a given number of decimals and a true minus; a half of
+// the last place is rounded away from zero, and a number that rounds to zero
+// has no sign.
 func Fixed(x float64, decimals int) string {
-	s := strconv.FormatFloat(x, 'f', decimals, 64)
+	s := strconv.FormatFloat(halfAway(x), 'f', decimals, 64)
 	if strings.Trim(s, "-0.") == "" {
 		return strings.TrimPrefix(s, "-")
 	}
 	return strings.Replace(s, "-", "−", 1)
+}
+
+// halfAway moves x by less than half of its 15th digit away from zero, so that
+// 273.15, whose float64 lies a hair below, is 273.2 to one decimal.
+func halfAway(x float64) float64 {
+	if y := x + float64(x*3e-16); !math.IsInf(y, 0) {
+		return y
+	}
+	return x
 }
 
 // PPMText prints a relative number (1) in ppm without the unit: one decimal
