@@ -76,6 +76,7 @@ func TestNearUnit(t *testing.T) {
 		{Resistivity, "°C", string(Temperature)},
 		{Coefficient1, "pm/K", "ppm/K"},
 		{Resistivity, "furlongs", ""},
+		{Temperature, "", "°C, K, °F"},
 	} {
 		if got := NearUnit(c.kind, c.spelled); got != c.want {
 			t.Errorf("near %q: %q, want %q", c.spelled, got, c.want)

@@ -64,8 +64,12 @@ func KindsOf(spelled string) []Kind {
 
 // NearUnit tells what a spelling that is no unit of k was probably meant for:
 // the near unit of k for a typo, or the name of the kind that it is a unit of;
-// "" when neither is found.
+// "" when neither is found. For a unit that is missing, "", it gives the usual
+// units of k.
 func NearUnit(k Kind, spelled string) string {
+	if spelled == "" {
+		return usual(k)
+	}
 	if _, ok := FindUnit(k, spelled); ok {
 		return spelled
 	}
