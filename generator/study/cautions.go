@@ -13,3 +13,6 @@ const (
 
 // comparisonCautions go with every comparison that someone may choose a part by.
 var comparisonCautions = []string{CautionNotApproval, CautionHot, CautionIsolate, CautionProtective, CautionCodes}
+
+// SheetCautions go with every sheet and with the page of decisions.
+func SheetCautions() []string { return append([]string{}, comparisonCautions...) }

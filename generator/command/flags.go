@@ -1,0 +1,55 @@
+package command
+
+import (
+	"fmt"
+	"strings"
+	"time"
+
+	"ohmfolio/generator/place"
+	"ohmfolio/generator/quantity"
+)
+
+// oneOf refuses a word that a flag does not know.
+func oneOf(flag, word string, words ...string) error {
+	for _, w := range words {
+		if w == word {
+			return nil
+		}
+	}
+	hint := ""
+	if near := place.Near(word, words); near != "" {
+		hint = "; did you mean " + near + "?"
+	}
+	return fmt.Errorf("%s takes %s, not %q%s", flag, strings.Join(words, ", "), word, hint)
+}
+
+func isDate(text string) error {
+	if text == "" {
+		return nil
+	}
+	if _, err := time.Parse("2006-01-02", text); err != nil {
+		return fmt.Errorf("--today takes a date such as 2026-12-01, not %q", text)
+	}
+	return nil
+}
+
+// temperature reads a flag's temperature in kelvin.
+func temperature(flag, text string) (float64, error) {
+	q, p := quantity.Parse(quantity.Temperature, text)
+	if p != nil {
+		return 0, fmt.Errorf("%s %q: %s", flag, text, p.Error())
+	}
+	if !q.HasValue() {
+		return 0, fmt.Errorf("%s takes one temperature, not %q", flag, text)
+	}
+	return q.Value, nil
+}
+
+// optionalTemperature is nil for a flag that was not given.
+func optionalTemperature(flag, text string) (*float64, error) {
+	if text == "" {
+		return nil, nil
+	}
+	t, err := temperature(flag, text)
+	return &t, err
+}

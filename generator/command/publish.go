@@ -1,0 +1,237 @@
+package command
+
+import (
+	"encoding/json"
+	"fmt"
+	"io/fs"
+	"os"
+	"path/filepath"
+	"runtime"
+	"runtime/debug"
+	"strings"
+	"sync"
+	"time"
+
+	"github.com/spf13/cobra"
+
+	"ohmfolio/generator/examine"
+	"ohmfolio/generator/export"
+	"ohmfolio/generator/library"
+	"ohmfolio/generator/output"
+	"ohmfolio/generator/place"
+	"ohmfolio/generator/site"
+	"ohmfolio/generator/statement"
+	"ohmfolio/generator/study"
+	"ohmfolio/themes"
+)
+
+func (s *session) publish() *cobra.Command {
+	var into, report string
+	c := &cobra.Command{
+		Use: "publish", Short: "Examine the reference, then write the whole site",
+		Long: `Examines everything, then writes the site. Nothing is written while a record
+or a page is in error. A binding study that does not hold is written with its
+verdict, and the exit code is 1.`,
+		Example: "  ohmfolio publish --into public",
+		Args:    cobra.NoArgs,
+		RunE: func(_ *cobra.Command, _ []string) error {
+			if into == "" {
+				into = filepath.Join(s.folder, "public")
+			}
+			return s.runPublish(into, report)
+		},
+	}
+	c.Flags().StringVar(&into, "into", "", "folder for the site; public/ under --folder when not given")
+	c.Flags().StringVar(&report, "report", "", "file for a report in JSON")
+	return c
+}
+
+// reportJSON is what --report writes; the names are a contract.
+type reportJSON struct {
+	Written  int                   `json:"written"`
+	Removed  int                   `json:"removed"`
+	Pages    int                   `json:"pages"`
+	Files    int                   `json:"files"`
+	Bytes    int64                 `json:"bytes"`
+	Seconds  float64               `json:"seconds"`
+	Findings []examine.FindingJSON `json:"findings"`
+	Failing  []failingJSON         `json:"failing"`
+}
+
+// failingJSON is one binding study that does not hold.
+type failingJSON struct {
+	Study    string `json:"study"`
+	Title    string `json:"title"`
+	File     string `json:"file"`
+	Material string `json:"material"`
+	Verdict  string `json:"verdict"`
+}
+
+func (s *session) runPublish(into, reportFile string) error {
+	relaxCollector()
+	start := time.Now()
+	lib, err := s.load()
+	if err != nil {
+		return err
+	}
+	outcomes, findings := examineAll(lib, "")
+	rep := reportJSON{Findings: examine.JSON(findings).Findings, Failing: failing(outcomes)}
+	s.printFindings(findings)
+	if n := place.Count(findings, place.Error); n > 0 {
+		fmt.Fprintf(s.err, "nothing is written: %s\n", plural(n, "error"))
+		return joinError(errShown, writeReport(reportFile, rep, start))
+	}
+	result, pages, err := s.write(lib, outcomes, findings, into)
+	rep.Written, rep.Removed, rep.Files, rep.Bytes, rep.Pages = result.Written, result.Removed, result.Files, result.Bytes, pages
+	if err := joinError(err, writeReport(reportFile, rep, start)); err != nil {
+		return err
+	}
+	if len(rep.Failing) > 0 {
+		return wrong("the site is written; %s not hold: %s", plural(len(rep.Failing), "binding verdict")+" does", failingText(rep.Failing))
+	}
+	fmt.Fprintf(s.out, "%s, %s, %d written, %.1f s: %s\n", plural(len(lib.Materials), "material"), plural(result.Files, "file"),
+		result.Written, time.Since(start).Seconds(), filepath.ToSlash(filepath.Join(into, "index.html")))
+	return nil
+}
+
+// relaxCollector trades memory for time: many small pages make much garbage.
+func relaxCollector() {
+	debug.SetGCPercent(400)
+	debug.SetMemoryLimit(120 << 20)
+}
+
+func joinError(first, second error) error {
+	if first != nil {
+		return first
+	}
+	return second
+}
+
+func failing(outcomes []examine.Judged) []failingJSON {
+	list := []failingJSON{}
+	for _, j := range outcomes {
+		for _, m := range j.Outcome.Materials {
+			if j.Outcome.Binding && m.Verdict != study.Holds && m.Verdict != study.NotAsked {
+				list = append(list, failingJSON{j.Outcome.Study, j.Outcome.Title, j.Document.Source.File, m.Material, string(m.Verdict)})
+			}
+		}
+	}
+	return list
+}
+
+func failingText(list []failingJSON) string {
+	var parts []string
+	for _, f := range list {
+		parts = append(parts, f.Title+": "+f.Material+" "+f.Verdict)
+	}
+	return strings.Join(parts, "; ")
+}
+
+func writeReport(file string, r reportJSON, start time.Time) error {
+	if file == "" {
+		return nil
+	}
+	r.Seconds = time.Since(start).Seconds()
+	text, err := json.MarshalIndent(r, "", "  ")
+	if err != nil {
+		return err
+	}
+	return os.WriteFile(file, append(text, '\n'), 0o644)
+}
+
+// write makes the statements, joins the lists and puts the files in place.
+func (s *session) write(lib *library.Library, outcomes []examine.Judged, findings []place.Finding, into string) (output.Result, int, error) {
+	list, err := Outputs(lib, outcomes, findings, themeOf(s.folder))
+	if err != nil {
+		return output.Result{}, 0, err
+	}
+	pages := 0
+	for _, o := range list {
+		if strings.HasSuffix(o.Path, ".html") {
+			pages++
+		}
+	}
+	result, err := output.Publish(into, list, output.Options{Parallel: runtime.GOMAXPROCS(0), Progress: s.progress()})
+	return result, pages, err
+}
+
+// Outputs joins the pages and the data files of a reference.
+func Outputs(lib *library.Library, outcomes []examine.Judged, findings []place.Finding, theme fs.FS) ([]output.Output, error) {
+	statements := statementsOf(lib)
+	in := &site.Input{Library: lib, Statements: statements, Outcomes: map[string][]*study.Outcome{}, Findings: findings, Theme: theme}
+	for _, j := range outcomes {
+		key := strings.TrimPrefix(j.Document.Room+"/"+j.Document.Stem, "/")
+		in.Outcomes[key] = append(in.Outcomes[key], j.Outcome)
+	}
+	in.Answer = func(question, written, id string) (string, string, bool) {
+		r := lib.Material(id)
+		if r == nil {
+			return written, "", false
+		}
+		a, err := statement.AskInWords(lib, r, question, written)
+		return a.Text, a.Note, err == nil
+	}
+	pages, err := site.Outputs(in)
+	if err != nil {
+		return nil, err
+	}
+	return append(pages, export.Outputs(lib, statements)...), nil
+}
+
+// statementsOf computes the statements in parallel.
+func statementsOf(lib *library.Library) []*statement.Statement {
+	list := make([]*statement.Statement, len(lib.Materials))
+	n := runtime.GOMAXPROCS(0)
+	var wait sync.WaitGroup
+	for i := range n {
+		wait.Add(1)
+		go func() {
+			defer wait.Done()
+			for j := i; j < len(list); j += n {
+				list[j] = statement.Of(lib, lib.Materials[j])
+			}
+		}()
+	}
+	wait.Wait()
+	return list
+}
+
+// themeOf is the built-in theme, which the folder's own themes/ overrides
+// file by file.
+func themeOf(folder string) fs.FS {
+	return overlay{own: os.DirFS(filepath.Join(folder, "themes")), built: themes.Files}
+}
+
+// overlay takes a file from own when it is there.
+type overlay struct{ own, built fs.FS }
+
+// Open implements fs.FS.
+func (o overlay) Open(name string) (fs.File, error) {
+	if f, err := o.own.Open(name); err == nil {
+		return f, nil
+	}
+	return o.built.Open(name)
+}
+
+// progress prints a line that counts, on a terminal and after the first
+// second only.
+func (s *session) progress() func(done, total int) {
+	if !terminal(s.err) {
+		return nil
+	}
+	start, last := time.Now(), time.Time{}
+	var mu sync.Mutex
+	return func(done, total int) {
+		mu.Lock()
+		defer mu.Unlock()
+		now := time.Now()
+		if now.Sub(start) < time.Second || (now.Sub(last) < 100*time.Millisecond && done < total) {
+			return
+		}
+		last = now
+		fmt.Fprintf(s.err, "\r%d of %d files", done, total)
+		if done == total {
+			fmt.Fprintln(s.err)
+		}
+	}
+}

@@ -1,0 +1,213 @@
+package site
+
+import (
+	"bytes"
+	"encoding/json"
+	"math"
+	"sort"
+	"strconv"
+	"strings"
+
+	"ohmfolio/generator/curve"
+	"ohmfolio/generator/material"
+	"ohmfolio/generator/output"
+	"ohmfolio/generator/quantity"
+	"ohmfolio/generator/statement"
+)
+
+// listRow is one material in the lists. The Value fields are for sorting, ""
+// when there is none.
+type listRow struct {
+	ID, Name, Family, Status, Range      string
+	Rho, RhoValue                        string
+	Alpha, AlphaValue, Beta              string
+	Change, ChangeValue, Warm, WarmValue string
+	EMF, Density, Service                string
+}
+
+const twenty = quantity.ZeroCelsius + 20
+
+func row(st *statement.Statement) listRow {
+	r := st.Record
+	l := listRow{ID: r.ID, Name: r.Name, Family: or(string(r.Family), "not stated"), Status: statusText(r), Rho: "not told at 20\u202f°C", Alpha: "not stated", Beta: "",
+		Change: "not told", Warm: "not told", EMF: propertyText(r, "emf_to_copper"), Density: propertyText(r, "density"), Service: serviceText(r)}
+	set := st.Set
+	if set == nil {
+		return l
+	}
+	l.Range = quantity.CelsiusText(set.Valid.Lo) + " to " + quantity.CelsiusText(set.Valid.Hi)
+	if set.Model == material.Point {
+		l.Range = "one temperature, " + quantity.CelsiusText(set.Valid.Lo)
+	}
+	if v, ok := (material.Reading{Told: set.Rho}).At(twenty); ok {
+		x := st.Units.Resistivity.FromSI(v)
+		l.Rho, l.RhoValue = quantity.Number(x, set.Digits()), plain(x)
+	}
+	if p, ok := set.Polynomial(); ok {
+		l.Alpha, l.AlphaValue = quantity.Number(p.Alpha*1e6, set.Alpha.Digits), plain(p.Alpha*1e6)
+		if set.Beta != nil {
+			l.Beta = quantity.Number(p.Beta*1e6, set.Beta.Digits)
+		}
+	}
+	l.Change, l.ChangeValue = changeOver(set, -40, 85)
+	l.Warm, l.WarmValue = changeOver(set, 0, 60)
+	return l
+}
+
+func or(s, other string) string {
+	if s == "" {
+		return other
+	}
+	return s
+}
+
+func statusText(r *material.Record) string {
+	s := or(string(r.Status), string(material.Draft))
+	if r.Invented {
+		s += ", invented"
+	}
+	return s
+}
+
+func plain(x float64) string {
+	return strconv.FormatFloat(quantity.Round12(x), 'g', 6, 64)
+}
+
+// changeOver is the greatest change from 20 °C over a window in °C; the sort
+// value is its magnitude.
+func changeOver(set *material.DataSet, lo, hi float64) (text, value string) {
+	if !set.Ratio.HasNominal() {
+		return "no coefficient", ""
+	}
+	m, err := curve.Measure(set.Ratio.Nominal, twenty, quantity.ZeroCelsius+lo, quantity.ZeroCelsius+hi)
+	if err != nil {
+		return "outside the range", ""
+	}
+	return quantity.ChangeText(m.Change.Greatest), plain(math.Abs(m.Change.Greatest))
+}
+
+func propertyText(r *material.Record, name string) string {
+	p := r.Property(name)
+	if p == nil {
+		return "not stated"
+	}
+	unit := quantity.Units(p.Value.Kind)[0] // one scale for the column
+	return strings.TrimSuffix(p.Value.In(unit), quantity.NarrowSpace+unit.Symbol)
+}
+
+func serviceText(r *material.Record) string {
+	p := r.Property("service_temperature")
+	switch {
+	case p == nil:
+		return "not stated"
+	case p.Continuous != nil:
+		return p.Continuous.In(p.Continuous.Unit)
+	}
+	return p.Accuracy.In(p.Accuracy.Unit)
+}
+
+// materialsPage is what materials-page.tmpl and side-by-side-page.tmpl print.
+type materialsPage struct {
+	frame
+	Rows     []listRow
+	Families []string
+	Unit     string
+	Reports  []link
+}
+
+func (s *site) rows() []listRow {
+	var rows []listRow
+	for _, st := range s.in.Statements {
+		rows = append(rows, row(st))
+	}
+	sort.SliceStable(rows, func(i, j int) bool { return strings.ToLower(rows[i].Name) < strings.ToLower(rows[j].Name) })
+	return rows
+}
+
+func (s *site) unit() string {
+	if len(s.in.Statements) > 0 {
+		return s.in.Statements[0].Units.Resistivity.Symbol
+	}
+	return "µΩ·cm"
+}
+
+func (s *site) materials() output.Output {
+	return s.page("materials.html", "materials-page", func() any {
+		p := materialsPage{frame: s.frame("Materials", "list", "", "materials.html", "list.js", "evaluate.js", "materials.js"), Rows: s.rows(), Unit: s.unit()}
+		seen := map[string]bool{}
+		for _, r := range p.Rows {
+			if r.Family != "not stated" && !seen[r.Family] {
+				seen[r.Family] = true
+				p.Families = append(p.Families, r.Family)
+			}
+		}
+		sort.Strings(p.Families)
+		return p
+	})
+}
+
+func (s *site) sideBySide() output.Output {
+	return s.page("side-by-side.html", "side-by-side-page", func() any {
+		return materialsPage{frame: s.frame("Side by side", "beside", "", "side-by-side.html", "beside.js"), Rows: s.rows(), Unit: s.unit(), Reports: s.pages("reports")}
+	})
+}
+
+// listed is one material in the data script of the list.
+type listed struct {
+	ID     string       `json:"id"`
+	Family string       `json:"family"`
+	Status string       `json:"status"`
+	Words  string       `json:"words"`
+	Rho    *float64     `json:"rho"`   // at 20 °C in the house unit
+	Ratio  [][7]float64 `json:"ratio"` // segments of R/R_ref in kelvin
+}
+
+// listScript is the data of the list as a script: pages opened as files may
+// not fetch their neighbours.
+func listScript(in *Input) []byte {
+	list := []listed{}
+	for _, st := range in.Statements {
+		list = append(list, listedOf(st))
+	}
+	text, err := json.Marshal(list) // escapes <, > and &, so no text can end the script
+	if err != nil {
+		panic(err) // numbers are finite and texts are texts
+	}
+	var b bytes.Buffer
+	b.WriteString("\"use strict\";\nvar listed = ")
+	b.Write(text)
+	b.WriteString(";\n")
+	return b.Bytes()
+}
+
+func listedOf(st *statement.Statement) listed {
+	r := st.Record
+	l := listed{ID: r.ID, Family: string(r.Family), Status: string(r.Status), Words: findWords(r)}
+	if st.Set == nil {
+		return l
+	}
+	if v, ok := (material.Reading{Told: st.Set.Rho}).At(twenty); ok {
+		x := quantity.Round12(st.Units.Resistivity.FromSI(v))
+		l.Rho = &x
+	}
+	if st.Set.Ratio.HasNominal() && st.Set.Valid.Hi > st.Set.Valid.Lo {
+		for _, g := range st.Set.Ratio.Nominal.Segments {
+			l.Ratio = append(l.Ratio, [7]float64{g.From, g.To, g.Centre, round12(g.C[0]), round12(g.C[1]), round12(g.C[2]), round12(g.C[3])})
+		}
+	}
+	return l
+}
+
+func round12(x float64) float64 { return quantity.Round12(x) }
+
+// findWords is what the text field looks through: lower case.
+func findWords(r *material.Record) string {
+	parts := append([]string{r.ID, r.Name, string(r.Family)}, r.Formerly...)
+	for _, d := range r.Designations {
+		parts = append(parts, d.Text)
+	}
+	for _, c := range r.Composition {
+		parts = append(parts, c.Key)
+	}
+	return strings.ToLower(strings.Join(parts, " "))
+}

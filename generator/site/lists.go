@@ -1,0 +1,202 @@
+package site
+
+import (
+	"html/template"
+	"sort"
+	"strings"
+
+	"ohmfolio/generator/library"
+	"ohmfolio/generator/material"
+	"ohmfolio/generator/output"
+	"ohmfolio/generator/place"
+	"ohmfolio/generator/quantity"
+	"ohmfolio/generator/statement"
+	"ohmfolio/generator/study"
+)
+
+// homePage is what home-page.tmpl prints.
+type homePage struct {
+	frame
+	Count, Released int
+	Body            template.HTML
+	Reports, Guides []link
+}
+
+func (s *site) home() output.Output {
+	return s.page("index.html", "home-page", func() any {
+		p := homePage{frame: s.frame("Home", "home", "", ""), Count: len(s.in.Statements), Reports: s.pages("reports"), Guides: s.pages("guides")}
+		for _, st := range s.in.Statements {
+			if st.Record.Status == material.Released {
+				p.Released++
+			}
+		}
+		for _, d := range s.in.Library.Documents {
+			if d.Room == "" {
+				p.frame.Title, p.Body = d.Page.Title, s.body(d, "")
+			}
+		}
+		return p
+	})
+}
+
+// sourceRow is one source with the materials that cite it.
+type sourceRow struct {
+	ID, Text, Kind, Checked, Superseded, Note string
+	Invented                                  bool
+	Used                                      []link
+}
+
+func (s *site) sources() output.Output {
+	return s.page("sources.html", "sources-page", func() any {
+		used := s.citedBy()
+		var rows []sourceRow
+		for _, id := range s.in.Library.SourceIDs {
+			src := s.in.Library.Source(id)
+			rows = append(rows, sourceRow{id, statement.SourceText(src), src.Kind, checkedText(src), src.SupersededBy, src.Note, src.Invented, used[id]})
+		}
+		return struct {
+			frame
+			Rows []sourceRow
+		}{s.frame("Sources", "sources", "", "sources.html"), rows}
+	})
+}
+
+func checkedText(src *library.Source) string {
+	t := or(string(src.Checked), "not stated")
+	if src.CheckedDate != "" {
+		t += ", " + src.CheckedDate
+	}
+	if src.CheckedBy != "" {
+		t += ", " + src.CheckedBy
+	}
+	return t
+}
+
+func (s *site) citedBy() map[string][]link {
+	used := map[string][]link{}
+	for _, st := range s.in.Statements {
+		for _, row := range st.Sources {
+			used[row.ID] = append(used[row.ID], link{shortName(st.Record), "material/" + st.Record.ID + ".html"})
+		}
+	}
+	return used
+}
+
+func (s *site) words() output.Output {
+	return s.page("words.html", "words-page", func() any {
+		return struct {
+			frame
+			Terms    []term
+			HasGuide bool
+		}{s.frame("Words", "words", "", ""), terms, linkTo(s.pages("guides"), "guide/how-to-read-a-sheet.html")}
+	})
+}
+
+func linkTo(list []link, path string) bool {
+	for _, l := range list {
+		if l.Path == path {
+			return true
+		}
+	}
+	return false
+}
+
+// decisionRow is one requirement of one study.
+type decisionRow struct {
+	Title, Path, Material, Name, Requirement, Verdict, Margin, Evidence string
+	Binding                                                             bool
+	margin                                                              float64
+}
+
+func (s *site) decisions() output.Output {
+	return s.page("decisions.html", "decisions-page", func() any {
+		return struct {
+			frame
+			Rows     []decisionRow
+			Reports  []link
+			Cautions cautionList
+		}{s.frame("Decisions", "decisions", "", "decisions.html"), s.decisionRows(), s.pages("reports"), cautionList{"cautions", study.SheetCautions()}}
+	})
+}
+
+// decisionRows are sorted by margin, the worst first; what cannot be told
+// comes before all.
+func (s *site) decisionRows() []decisionRow {
+	var rows []decisionRow
+	for _, d := range s.in.Library.Documents {
+		for _, o := range s.outcomes(d) {
+			for _, m := range o.Materials {
+				for _, r := range m.Requirements {
+					rows = append(rows, s.decisionRow(d, o, m, r))
+				}
+			}
+		}
+	}
+	sort.SliceStable(rows, func(i, j int) bool { return rows[i].margin < rows[j].margin })
+	return rows
+}
+
+func (s *site) decisionRow(d *library.Document, o *study.Outcome, m study.MaterialOutcome, r study.Requirement) decisionRow {
+	row := decisionRow{Title: o.Title, Path: pagePath(d), Material: m.Material, Name: s.short(m.Material), Requirement: requirementText(r),
+		Verdict: string(r.Verdict), Margin: "cannot be told", Binding: o.Binding, margin: -1e9}
+	if r.Margin != nil {
+		row.Margin, row.margin = quantity.Fixed(*r.Margin*100, 1)+quantity.NarrowSpace+"%", *r.Margin
+	}
+	for _, e := range m.Evidence {
+		row.Evidence = e.Record + ", revision " + quantity.Number(float64(e.Revision), 6) + ", " + e.Fingerprint + ", " + e.Status
+	}
+	return row
+}
+
+// reviewPage is what review-page.tmpl prints.
+type reviewPage struct {
+	frame
+	Due       []dueRow
+	Open      []openRow
+	Unchecked []openRow
+	Findings  []findingRow
+}
+
+type dueRow struct {
+	ID, Name, Date, Due string
+	Revision            int
+}
+
+type openRow struct{ ID, Name, Status, What string }
+
+type findingRow struct{ Severity, Where, Message, Code string }
+
+func (s *site) review() output.Output {
+	return s.page("review.html", "review-page", func() any {
+		p := reviewPage{frame: s.frame("State of review", "review", "", "", "review.js")}
+		for _, st := range s.in.Statements {
+			s.reviewOf(&p, st)
+		}
+		sort.SliceStable(p.Due, func(i, j int) bool { return p.Due[i].Due < p.Due[j].Due })
+		for _, f := range s.in.Findings {
+			if f.Severity != place.Note {
+				p.Findings = append(p.Findings, findingRow{string(f.Severity), f.Position.String(), f.Message, f.Code})
+			}
+		}
+		return p
+	})
+}
+
+func (s *site) reviewOf(p *reviewPage, st *statement.Statement) {
+	r := st.Record
+	if r.SignOff != nil && r.SignOff.Due != "" && r.Status != material.Withdrawn {
+		p.Due = append(p.Due, dueRow{r.ID, r.Name, r.SignOff.Date, r.SignOff.Due, r.Revision})
+	}
+	if r.Status != material.Released {
+		p.Open = append(p.Open, openRow{ID: r.ID, Name: r.Name, Status: statusText(r)})
+	}
+	var what []string
+	for _, src := range st.Sources {
+		if src.Checked == string(material.Memory) || src.Checked == "not stated" {
+			what = append(what, src.ID+": "+src.Checked)
+		}
+	}
+	if len(what) > 0 {
+		p.Unchecked = append(p.Unchecked, openRow{ID: r.ID, Name: r.Name, What: strings.Join(what, ", ")})
+	}
+}

@@ -1,0 +1,162 @@
+// Package site makes the pages of a reference from statements, outcomes and
+// documents. Pages compute nothing: they print what stands in their input.
+package site
+
+import (
+	"bytes"
+	"fmt"
+	"io/fs"
+
+	"ohmfolio/generator/library"
+	"ohmfolio/generator/material"
+	"ohmfolio/generator/output"
+	"ohmfolio/generator/place"
+	"ohmfolio/generator/statement"
+	"ohmfolio/generator/study"
+)
+
+// Input is all that the pages are made of.
+type Input struct {
+	Library    *library.Library
+	Statements []*statement.Statement      // sorted by ID
+	Outcomes   map[string][]*study.Outcome // by document, "reports/x", in order of blocks
+	Findings   []place.Finding
+	Theme      fs.FS // templates, styles and scripts
+	// Answer gives the current value of a live number: text, note, and
+	// whether there is one.
+	Answer func(question, written, materialID string) (text, note string, ok bool)
+}
+
+// Outputs lists every page, style and script. The error names the template
+// that cannot be used.
+func Outputs(in *Input) ([]output.Output, error) {
+	s := &site{in: in, byID: map[string]*statement.Statement{}}
+	for _, st := range in.Statements {
+		s.byID[st.Record.ID] = st
+	}
+	var err error
+	if s.look, err = loadLook(in.Theme, listScript(in)); err != nil {
+		return nil, err
+	}
+	s.used = usedBy(in)
+	list := s.look.outputs()
+	list = append(list, s.home(), s.materials(), s.sideBySide(), s.sources(), s.words(), s.decisions(), s.review())
+	for _, st := range in.Statements {
+		list = append(list, s.material(st), s.sheet(st))
+	}
+	for _, d := range in.Library.Documents {
+		if d.Room != "" {
+			list = append(list, s.document(d))
+		}
+	}
+	return list, nil
+}
+
+// site is one run.
+type site struct {
+	in   *Input
+	look *look
+	byID map[string]*statement.Statement
+	used map[string][]statement.Use
+}
+
+// frame is what every page's frame prints; page structs embed it.
+type frame struct {
+	Title     string
+	Kind      string // class of the body
+	Root      string // "" or "../"
+	Style     string
+	Mark      string
+	Scripts   []string
+	Menu      []menuItem
+	Reference library.Settings
+}
+
+type menuItem struct {
+	Name, Path string
+	Here       bool
+}
+
+// link is a name with where it leads.
+type link struct{ Name, Path string }
+
+// contentsItem is one entry of the line of contents.
+type contentsItem struct{ ID, Text string }
+
+// cautionList is the cautions of one page.
+type cautionList struct {
+	ID   string
+	List []string
+}
+
+func (s *site) frame(title, kind, root, here string, scripts ...string) frame {
+	f := frame{Title: title, Kind: kind, Root: root, Style: s.look.style, Mark: s.look.mark, Reference: s.in.Library.Settings}
+	for _, name := range append(scripts, "tables.js") {
+		f.Scripts = append(f.Scripts, s.look.scripts[name])
+	}
+	for _, m := range []menuItem{{"Materials", "materials.html", false}, {"Side by side", "side-by-side.html", false},
+		{"Decisions", "decisions.html", false}, {"Sources", "sources.html", false}, {"How to read", s.howToRead(), false}} {
+		m.Here = m.Path == here
+		f.Menu = append(f.Menu, m)
+	}
+	return f
+}
+
+// howToRead is the first guide, or the words page where there is none.
+func (s *site) howToRead() string {
+	for _, d := range s.in.Library.Documents {
+		if d.Room == "guides" {
+			return pagePath(d)
+		}
+	}
+	return "words.html"
+}
+
+// page makes the output of one template.
+func (s *site) page(path, template string, data func() any) output.Output {
+	return output.Output{Path: path, Write: func(w *bytes.Buffer) error {
+		if err := s.look.templates.ExecuteTemplate(w, template, data()); err != nil {
+			return fmt.Errorf("template %s: %w", template, err)
+		}
+		return nil
+	}}
+}
+
+// pagePath is where a document is written.
+func pagePath(d *library.Document) string {
+	switch d.Room {
+	case "guides":
+		return "guide/" + d.Stem + ".html"
+	case "reports":
+		return "report/" + d.Stem + ".html"
+	}
+	return "index.html"
+}
+
+// pages lists the documents of a room as links from the root.
+func (s *site) pages(room string) []link {
+	var list []link
+	for _, d := range s.in.Library.Documents {
+		if d.Room == room {
+			list = append(list, link{d.Page.Title, pagePath(d)})
+		}
+	}
+	return list
+}
+
+func (s *site) materialLink(id, root string) link {
+	if st := s.byID[id]; st != nil {
+		return link{st.Record.Name, root + "material/" + id + ".html"}
+	}
+	return link{id, ""}
+}
+
+// shortName is the short designation where there is one.
+func shortName(r *material.Record) string {
+	for _, d := range r.Designations {
+		if d.Key == "short" {
+			return d.Text
+		}
+	}
+	return r.Name
+}
