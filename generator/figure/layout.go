@@ -170,22 +170,44 @@ func (f *Figure) labelRoom() int {
 	for _, l := range f.Lines {
 		n = max(n, utf8.RuneCountInString(l.Label))
 	}
+	for _, a := range f.Areas {
+		n = max(n, utf8.RuneCountInString(a.Label))
+	}
 	return min(200, int(float64(n)*labelWidth))
 }
 
-// placeLabels puts a label at the end of each curve and spreads those that
-// would touch, keeping their order.
+// placeLabels puts a label at the end of each curve and band, and spreads
+// those that end at the same place and would touch, keeping their order.
 func (f *Figure) placeLabels(l layout) []label {
 	var list []label
-	for _, line := range f.Lines {
-		if line.Label == "" {
-			continue
+	add := func(text string, ink int, x, y float64) {
+		if text != "" {
+			at := l.y.at(y)
+			list = append(list, label{text: text, ink: ink, x: l.x.at(x) + 6*unit, y: at, end: at})
 		}
-		end := l.y.at(line.Y[len(line.Y)-1])
-		list = append(list, label{text: line.Label, ink: line.Ink, x: l.x.to + 6*unit, y: end, end: end})
 	}
-	sort.SliceStable(list, func(i, j int) bool { return list[i].y < list[j].y })
-	spread(list, l.y.to, l.y.from)
+	for _, line := range f.Lines {
+		n := len(line.X) - 1
+		add(line.Label, line.Ink, line.X[n], line.Y[n])
+	}
+	for _, a := range f.Areas {
+		n := len(a.X) - 1
+		add(a.Label, a.Ink, a.X[n], (a.Upper[n]+a.Lower[n])/2)
+	}
+	sort.SliceStable(list, func(i, j int) bool {
+		if list[i].x != list[j].x {
+			return list[i].x < list[j].x
+		}
+		return list[i].y < list[j].y
+	})
+	for from := 0; from < len(list); {
+		to := from + 1
+		for to < len(list) && list[to].x == list[from].x {
+			to++
+		}
+		spread(list[from:to], l.y.to, l.y.from)
+		from = to
+	}
 	return list
 }
 

@@ -83,4 +83,5 @@ type Told struct {
 	K           float64  // coverage factor the source printed, 2 when several differ
 	Covers      []string // what Uncertainty contains: "resistivity", "alpha"
 	NotCovered  []string // what it does not: "beta: without uncertainty"
+	NoLimits    []string // why limits are missing or incomplete: "α: no limits stated"
 }

@@ -169,7 +169,7 @@ func (b *lowering) told(nominal curve.Curve, corners []curve.Curve, power int) *
 	if len(corners) > 0 {
 		t.Limits = &curve.Band{Corners: corners, Covers: covers, NotCovered: missing}
 	}
-	t.NotCovered = missing
+	t.NoLimits = missing
 	b.uncertainty(t, power == 0)
 	return t
 }

@@ -20,7 +20,7 @@ import (
 type listRow struct {
 	ID, Name, Family, Status, Range      string
 	Rho, RhoValue                        string
-	Alpha, AlphaValue, Beta              string
+	Slope, SlopeValue                    string
 	Change, ChangeValue, Warm, WarmValue string
 	EMF, Density, Service                string
 }
@@ -29,7 +29,7 @@ const twenty = quantity.ZeroCelsius + 20
 
 func row(st *statement.Statement) listRow {
 	r := st.Record
-	l := listRow{ID: r.ID, Name: r.Name, Family: or(string(r.Family), "not stated"), Status: statusText(r), Rho: "not told at 20\u202f°C", Alpha: "not stated", Beta: "",
+	l := listRow{ID: r.ID, Name: r.Name, Family: or(string(r.Family), "not stated"), Status: statusText(r), Rho: "not told at 20\u202f°C", Slope: "no coefficient",
 		Change: "not told", Warm: "not told", EMF: propertyText(r, "emf_to_copper"), Density: propertyText(r, "density"), Service: serviceText(r)}
 	set := st.Set
 	if set == nil {
@@ -43,14 +43,9 @@ func row(st *statement.Statement) listRow {
 		x := st.Units.Resistivity.FromSI(v)
 		l.Rho, l.RhoValue = quantity.Number(x, set.Digits()), plain(x)
 	}
-	if p, ok := set.Polynomial(); ok {
-		l.Alpha, l.AlphaValue = quantity.Number(p.Alpha*1e6, set.Alpha.Digits), plain(p.Alpha*1e6)
-		if set.Beta != nil {
-			l.Beta = quantity.Number(p.Beta*1e6, set.Beta.Digits)
-		}
-	}
+	l.Slope, l.SlopeValue = slopeAt20(set)
+	l.Warm, l.WarmValue = changeOver(set, 20, 60)
 	l.Change, l.ChangeValue = changeOver(set, -40, 85)
-	l.Warm, l.WarmValue = changeOver(set, 0, 60)
 	return l
 }
 
@@ -84,6 +79,20 @@ func changeOver(set *material.DataSet, lo, hi float64) (text, value string) {
 		return "outside the range", ""
 	}
 	return quantity.ChangeText(m.Change.Greatest), plain(math.Abs(m.Change.Greatest))
+}
+
+// slopeAt20 is (1/R)·dR/dT of a fixed body at 20 °C in ppm/K: one measure
+// that every curve has, whatever its model.
+func slopeAt20(set *material.DataSet) (text, value string) {
+	if !set.Ratio.HasNominal() {
+		return "no coefficient", ""
+	}
+	v, ok := set.Ratio.Nominal.At(twenty)
+	d, ok2 := set.Ratio.Nominal.Slope(twenty)
+	if !ok || !ok2 || v == 0 {
+		return "outside the range", ""
+	}
+	return quantity.PPMText(d / v), plain(d / v * 1e6)
 }
 
 func propertyText(r *material.Record, name string) string {

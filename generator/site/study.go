@@ -72,7 +72,7 @@ func chartFigure(c study.Chart, id string) *figure.Figure {
 		ink, dash := i%4+1, (i+i/4)%4+1
 		f.Lines = append(f.Lines, figure.Line{Label: s.Label, X: s.X, Y: s.Y, Ink: ink, Dash: dash})
 		if len(s.Lower) > 0 {
-			f.Areas = append(f.Areas, figure.Area{Label: s.Label, X: s.X, Lower: s.Lower, Upper: s.Upper, Ink: ink})
+			f.Areas = append(f.Areas, figure.Area{X: s.X, Lower: s.Lower, Upper: s.Upper, Ink: ink})
 		}
 	}
 	return f
@@ -80,7 +80,7 @@ func chartFigure(c study.Chart, id string) *figure.Figure {
 
 func (s *site) studyTable(t study.Table, root string) template.HTML {
 	var w tableWriter
-	w.begin(t.Caption, t.Heads)
+	w.begin(t.Caption, t.Heads, firstRow(t.Rows))
 	for i, row := range t.Rows {
 		first := ""
 		if i < len(t.Links) && t.Links[i] != "" && len(row) > 0 {

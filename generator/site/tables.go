@@ -8,11 +8,15 @@ import (
 	"ohmfolio/generator/statement"
 )
 
+// wideCell is from how many bytes on a cell gets room of its own, so that a
+// long text does not become a tower of short lines.
+const wideCell = 24
+
 // tableWriter writes one table. Tables are the bulk of a page; writing them
 // here, every text escaped, is ten times faster than template loops.
 type tableWriter struct{ b strings.Builder }
 
-func (t *tableWriter) begin(caption string, heads []string) {
+func (t *tableWriter) begin(caption string, heads []string, first []string) {
 	t.b.WriteString(`<div class="scroll" tabindex="0" role="region" aria-label="`)
 	t.text(plainLabel(caption, heads))
 	t.b.WriteString(`"><table>`)
@@ -22,9 +26,13 @@ func (t *tableWriter) begin(caption string, heads []string) {
 		t.b.WriteString("</caption>")
 	}
 	t.b.WriteString("<thead><tr>")
-	for _, h := range heads {
-		t.b.WriteString(`<th scope="col">`)
-		t.head(h)
+	for i, h := range heads {
+		if i < len(first) && numeric(first[i]) && (i > 0 || wholeNumber(first[i])) {
+			t.b.WriteString(`<th scope="col" class="n">`) // above its numbers
+		} else {
+			t.b.WriteString(`<th scope="col">`)
+		}
+		t.text(h)
 		t.b.WriteString("</th>")
 	}
 	t.b.WriteString("</tr></thead>\n<tbody>")
@@ -37,10 +45,6 @@ func plainLabel(caption string, heads []string) string {
 	return "table of " + strings.Join(heads, ", ")
 }
 
-// head writes a column's head; a word that the words page explains is its own
-// abbreviation's title nowhere: the words page is linked from the section.
-func (t *tableWriter) head(h string) { t.text(h) }
-
 // row writes one row; the first cell is its head, written as HTML when first
 // is not empty.
 func (t *tableWriter) row(cells []string, first string) {
@@ -49,7 +53,7 @@ func (t *tableWriter) row(cells []string, first string) {
 		switch {
 		case i == 0 && first != "":
 			t.b.WriteString(`<th scope="row">` + first + "</th>")
-		case i == 0 && numeric(c):
+		case i == 0 && wholeNumber(c):
 			t.b.WriteString(`<th scope="row" class="n">`)
 			t.text(c)
 			t.b.WriteString("</th>")
@@ -59,6 +63,10 @@ func (t *tableWriter) row(cells []string, first string) {
 			t.b.WriteString("</th>")
 		case numeric(c):
 			t.b.WriteString(`<td class="n">`)
+			t.text(c)
+			t.b.WriteString("</td>")
+		case len(c) > wideCell:
+			t.b.WriteString(`<td class="w">`)
 			t.text(c)
 			t.b.WriteString("</td>")
 		default:
@@ -98,10 +106,22 @@ func numeric(s string) bool {
 	return s != "" && (s[0] >= '0' && s[0] <= '9' || s == "—")
 }
 
+// wholeNumber tells whether a row's head is a number and nothing else.
+func wholeNumber(s string) bool {
+	return numeric(s) && strings.Trim(s, "−0123456789.—") == ""
+}
+
+func firstRow(rows [][]string) []string {
+	if len(rows) == 0 {
+		return nil
+	}
+	return rows[len(rows)/2] // the middle one: ends may lie outside a range
+}
+
 func gridHTML(g statement.Grid) template.HTML {
 	var t tableWriter
 	t.b.Grow(4096)
-	t.begin(g.Caption, g.Heads)
+	t.begin(g.Caption, g.Heads, firstRow(g.Rows))
 	for _, row := range g.Rows {
 		t.row(row, "")
 	}
@@ -110,24 +130,20 @@ func gridHTML(g statement.Grid) template.HTML {
 
 func propertiesHTML(rows []statement.PropertyRow) template.HTML {
 	var t tableWriter
-	t.begin("Properties, each with its own source", []string{"Property", "value", "unit", "at", "±", "condition", "class", "source (checked)", "as written"})
+	t.begin("Properties, each with its own source", []string{"Property", "value", "unit", "at", "±", "condition", "class", "source (checked)", "note"}, nil)
 	for _, p := range rows {
 		source := p.SourceID
 		if p.SourceWhere != "" {
 			source += ", " + p.SourceWhere
 		}
-		written := p.Written
-		if p.Note != "" {
-			written += "; " + p.Note
-		}
-		t.row([]string{p.Name, p.Value, p.Unit, p.At, p.PlusMinus, p.Condition, p.Class, source + " (" + p.Checked + ")", written}, "")
+		t.row([]string{p.Name, p.Value, p.Unit, p.At, p.PlusMinus, p.Condition, p.Class, source + " (" + p.Checked + ")", p.Note}, "")
 	}
 	return t.end(nil)
 }
 
 func setsHTML(rows []statement.SetRow) template.HTML {
 	var t tableWriter
-	t.begin("Data sets of this record; the adopted one is the house value", []string{"Data set", "model", "basis", "reference", "ρ", "α", "β", "valid range", "class", "condition", "scale", "source (checked)"})
+	t.begin("Data sets of this record; the adopted one is the house value", []string{"Data set", "model", "basis", "reference", "ρ", "α", "β", "valid range", "class", "condition", "scale", "source (checked)"}, nil)
 	for _, s := range rows {
 		name := s.Name
 		if s.Adopted {

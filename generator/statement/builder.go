@@ -109,7 +109,7 @@ func (b *builder) headline() {
 		q    *quantity.Quantity
 	}{{"α", set.Alpha}, {"β", set.Beta}, {"γ", set.Gamma}} {
 		if c.q != nil {
-			facts = append(facts, Fact{Label: c.name + " about " + quantity.CelsiusText(set.Reference), Value: pretty(*c.q), Remark: c.q.Text})
+			facts = append(facts, Fact{Label: c.name + " about " + quantity.CelsiusText(set.Reference), Value: pretty(*c.q), Remark: asWrittenElse(*c.q)})
 		}
 	}
 	facts = append(facts, b.changeFact())
@@ -171,6 +171,16 @@ func basisText(basis material.Basis) string {
 
 // pretty is a quantity in the unit its author wrote, typeset.
 func pretty(q quantity.Quantity) string { return q.In(q.Unit) }
+
+// asWrittenElse is what the author wrote, "" when the printed form is the same
+// but for its typesetting.
+func asWrittenElse(q quantity.Quantity) string {
+	plain := strings.NewReplacer(quantity.NarrowSpace, " ", "−", "-", "+/-", "±", "  ", " ").Replace
+	if plain(pretty(q)) == plain(q.Text) {
+		return ""
+	}
+	return "written " + q.Text
+}
 
 func joined(list []string, none string) string {
 	if len(list) == 0 {

@@ -11,6 +11,9 @@ import (
 // under four pixels, below what an eye sees of a smooth curve.
 const curvePoints = 190
 
+// Two figures stand beside each other on a page and on a sheet.
+const figureWidth, figureHeight = 480, 300
+
 func (b *builder) figures() {
 	if b.set == nil || b.set.Valid.Hi <= b.set.Valid.Lo {
 		return
@@ -24,7 +27,7 @@ func (b *builder) rhoFigure() *figure.Figure {
 		return nil
 	}
 	u := b.s.Units.Resistivity
-	f := &figure.Figure{ID: "rho", Title: b.r.Name + ": resistivity against temperature",
+	f := &figure.Figure{ID: "rho", Width: figureWidth, Height: figureHeight, Title: b.r.Name + ": resistivity against temperature",
 		Description: "Volume resistivity of " + b.r.Name + " over its valid range, " + rangeText(b.set.Valid) + ". The table of values below holds the same numbers.",
 		XTitle:      "temperature in °C", YTitle: "ρ in " + u.Symbol}
 	b.plot(f, func(set *material.DataSet) (*material.Told, func(float64) float64, bool) {
@@ -38,7 +41,7 @@ func (b *builder) ratioFigure() *figure.Figure {
 		return nil
 	}
 	same := func(x float64) float64 { return x }
-	f := &figure.Figure{ID: "ratio", Title: b.r.Name + ": resistance ratio against temperature",
+	f := &figure.Figure{ID: "ratio", Width: figureWidth, Height: figureHeight, Title: b.r.Name + ": resistance ratio against temperature",
 		Description: "Resistance of a fixed body of " + b.r.Name + " over its value at " + quantity.CelsiusText(b.reference()) + ".",
 		XTitle:      "temperature in °C", YTitle: "R/R at " + quantity.CelsiusText(b.reference())}
 	b.plot(f, func(set *material.DataSet) (*material.Told, func(float64) float64, bool) {
@@ -78,6 +81,7 @@ func (b *builder) plotSet(f *figure.Figure, set *material.DataSet, e material.Re
 		line.Label = ""
 	}
 	area := figure.Area{Ink: inkOf(ink)}
+	band := bandOf(e, set)
 	for i := 0; i < curvePoints; i++ {
 		t := set.Valid.Lo + float64((set.Valid.Hi-set.Valid.Lo)*float64(i)/(curvePoints-1))
 		if i == curvePoints-1 {
@@ -86,7 +90,7 @@ func (b *builder) plotSet(f *figure.Figure, set *material.DataSet, e material.Re
 		if v, ok := e.At(t); ok {
 			line.X, line.Y = append(line.X, t-quantity.ZeroCelsius), append(line.Y, convert(v))
 		}
-		if l, ok := e.Limits(t); ok {
+		if l, ok := band(t); ok {
 			area.X, area.Lower, area.Upper = append(area.X, t-quantity.ZeroCelsius), append(area.Lower, convert(l.Lower)), append(area.Upper, convert(l.Upper))
 		}
 	}
@@ -94,8 +98,24 @@ func (b *builder) plotSet(f *figure.Figure, set *material.DataSet, e material.Re
 		f.Lines = append(f.Lines, line)
 	}
 	if len(area.X) > 1 && (adopted || len(line.X) == 0) {
-		area.Label = "limits of " + set.Name
+		if len(line.X) == 0 {
+			area.Label = set.Name
+		}
 		f.Areas = append(f.Areas, area)
+	}
+}
+
+// bandOf is the band that a figure shows: the stated limits, otherwise the
+// expanded uncertainty about the set's own reference temperature.
+func bandOf(e material.Reading, set *material.DataSet) func(t float64) (curve.Bounds, bool) {
+	u := e.Told.Uncertainty
+	if e.Told.Limits != nil || u == nil || (e.Ratio && e.Reference != set.RatioReference) {
+		return e.Limits
+	}
+	return func(t float64) (curve.Bounds, bool) {
+		v, ok := e.At(t)
+		half := float64(e.Told.K * u(t))
+		return curve.Bounds{Lower: v - half, Upper: v + half}, ok
 	}
 }
 

@@ -1,6 +1,8 @@
 package statement
 
 import (
+	"strings"
+
 	"ohmfolio/generator/curve"
 	"ohmfolio/generator/material"
 	"ohmfolio/generator/quantity"
@@ -30,6 +32,7 @@ func (b *builder) properties() {
 }
 
 func (b *builder) propertyRow(p material.Property, name string, q quantity.Quantity) {
+	q.Unit = printUnit(q)
 	row := PropertyRow{Name: name, Unit: q.Unit.Symbol, At: propertyAt(p), PlusMinus: "not stated",
 		Condition: orNotStated(p.Condition), Class: orNotStated(string(p.Class)), Written: q.Text, Note: p.Note,
 		SourceID: p.Source.ID, SourceWhere: p.Source.Where, Checked: orNotStated(string(b.lib.CheckedOf(p.Source)))}
@@ -58,9 +61,19 @@ func valueAndBand(q quantity.Quantity) (value, band string) {
 		band = q.Band(q.Unit)
 	}
 	if value == "" {
-		value, band = band, "limits without a nominal"
+		value, band = strings.TrimSuffix(band, quantity.NarrowSpace+q.Unit.Symbol), "limits"
 	}
 	return value, band
+}
+
+// printUnit is the unit as written, but ppm/K for a small coefficient written
+// in 1/K: 18 ppm/K reads better than 1.8×10⁻⁵ /K.
+func printUnit(q quantity.Quantity) quantity.Unit {
+	if q.Kind == quantity.Coefficient1 && q.Unit.Symbol == "/K" {
+		u, _ := quantity.FindUnit(quantity.Coefficient1, "ppm/K")
+		return u
+	}
+	return q.Unit
 }
 
 // classFigures holds every TCR limit against the curve by the same measure.

@@ -27,26 +27,45 @@ func (b *builder) perMetre() {
 		sections = commonSections()
 		b.s.PerMetreOf = "common sizes; no stock is recorded"
 	}
-	g := Grid{Caption: "Resistance per metre at " + quantity.CelsiusText(t),
-		Heads: []string{"Size", "section in mm²", "Ω/m", "Ω/m, limits", "Ω/1000 ft"}}
+	scale := b.lengthScale(sections, t)
+	g := Grid{Caption: "Resistance per length at " + quantity.CelsiusText(t),
+		Heads: []string{"Size", "section in mm²", scale.unit, scale.unit + ", limits", "Ω/1000 ft"}}
 	for _, s := range sections {
-		g.Rows = append(g.Rows, b.sectionRow(s, t))
+		g.Rows = append(g.Rows, b.sectionRow(s, t, scale))
 	}
 	g.Notes = []string{"R/L = ρ/A. Limits: worst case of the stated limits of ρ and of the size; a size without limits counts as exact."}
 	b.s.PerMetre = g
 }
 
-func (b *builder) sectionRow(s section, t float64) []string {
+// lengthScale is one unit for the whole column.
+type lengthScale struct {
+	unit   string
+	factor float64 // from Ω/m
+}
+
+// lengthScale chooses Ω/km, as the trade does for conductors, once every size
+// has less than 0.1 Ω/m.
+func (b *builder) lengthScale(sections []section, t float64) lengthScale {
+	rho, _ := b.set.Rho.Nominal.At(t)
+	for _, s := range sections {
+		if rho/s.area >= 0.1 {
+			return lengthScale{"Ω/m", 1}
+		}
+	}
+	return lengthScale{"Ω/km", 1000}
+}
+
+func (b *builder) sectionRow(s section, t float64, scale lengthScale) []string {
 	rho, ok := b.set.Rho.Nominal.At(t)
 	if !ok {
 		return []string{s.name, quantity.Number(s.area*1e6, 4), outside, outside, outside}
 	}
 	n := max(3, b.set.Digits())
 	r := rho / s.area
-	return []string{s.name, quantity.Number(s.area*1e6, 4), quantity.Number(r, n), b.sectionLimits(s, t, n), quantity.Number(r*304.8, n)}
+	return []string{s.name, quantity.Number(s.area*1e6, 4), quantity.Number(r*scale.factor, n), b.sectionLimits(s, t, n, scale.factor), quantity.Number(r*304.8, n)}
 }
 
-func (b *builder) sectionLimits(s section, t float64, n int) string {
+func (b *builder) sectionLimits(s section, t float64, n int, factor float64) string {
 	rho, _ := b.set.Rho.Nominal.At(t)
 	lo, hi, told := rho, rho, s.limited
 	if b.set.Rho.Limits != nil {
@@ -57,7 +76,7 @@ func (b *builder) sectionLimits(s section, t float64, n int) string {
 	if !told {
 		return "not stated"
 	}
-	return quantity.Number(lo/s.hi, n) + " to " + quantity.Number(hi/s.lo, n)
+	return quantity.Number(lo/s.hi*factor, n) + " to " + quantity.Number(hi/s.lo*factor, n)
 }
 
 func stockSections(stock []material.Stock) []section {

@@ -1,6 +1,7 @@
 package statement
 
 import (
+	"fmt"
 	"math"
 
 	"ohmfolio/generator/curve"
@@ -43,8 +44,10 @@ func (b *builder) constants() Grid {
 	if native {
 		n := coefficientDigits(b.set)
 		rows = append(rows,
-			constantRow{"α in ppm/K", func(t float64) string { return quantity.Number(poly.Rereference(t).Alpha*1e6, n) }},
-			constantRow{"β in ppm/K²", func(t float64) string { return quantity.Number(poly.Rereference(t).Beta*1e6, n) }})
+			constantRow{"α in ppm/K", func(t float64) string { return quantity.Number(poly.Rereference(t).Alpha*1e6, n) }})
+		if b.set.Beta != nil || b.set.Gamma != nil {
+			rows = append(rows, constantRow{"β in ppm/K²", func(t float64) string { return quantity.Number(poly.Rereference(t).Beta*1e6, n) }})
+		}
 		if b.set.Gamma != nil {
 			rows = append(rows, constantRow{"γ in ppm/K³", func(t float64) string { return quantity.Number(poly.Rereference(t).Gamma*1e6, n) }})
 		}
@@ -125,6 +128,9 @@ func (b *builder) valueHeads(kelvin bool) []string {
 		if b.set.Rho.Limits != nil {
 			heads = append(heads, "ρ, limits")
 		}
+		if b.set.Rho.Uncertainty != nil {
+			heads = append(heads, fmt.Sprintf("U of ρ (k=%g)", b.set.Rho.K))
+		}
 	}
 	if b.set.Ratio != nil {
 		heads = append(heads, "R/R at "+quantity.CelsiusText(b.reference()), "change")
@@ -144,6 +150,9 @@ func (b *builder) valueRow(t float64, kelvin bool) []string {
 		row = append(row, b.rhoText(t))
 		if b.set.Rho.Limits != nil {
 			row = append(row, b.limitText(t))
+		}
+		if b.set.Rho.Uncertainty != nil {
+			row = append(row, quantity.Number(b.s.Units.Resistivity.FromSI(float64(b.set.Rho.K*b.set.Rho.Uncertainty(t))), 2))
 		}
 	}
 	if b.set.Ratio != nil {
@@ -190,15 +199,25 @@ func (b *builder) valueNotes() []string {
 	return notes
 }
 
+func notCovered(list []string) string {
+	if len(list) == 0 {
+		return "."
+	}
+	return "; not covered: " + joined(list, "") + "."
+}
+
 func bandNote(name string, t *material.Told) []string {
-	if t.Limits == nil {
-		return []string{name + " is shown without limits: " + joined(t.NotCovered, "none are stated") + "."}
+	var notes []string
+	if t.Limits == nil && t.Uncertainty == nil {
+		notes = append(notes, name+" is shown without a band: "+joined(t.NoLimits, "none is stated")+".")
 	}
-	note := name + " limits: worst case from " + joined(t.Limits.Covers, "")
-	if len(t.Limits.NotCovered) > 0 {
-		note += "; not covered: " + joined(t.Limits.NotCovered, "")
+	if t.Limits != nil {
+		notes = append(notes, name+" limits: worst case from "+joined(t.Limits.Covers, "")+notCovered(t.Limits.NotCovered))
 	}
-	return []string{note + "."}
+	if t.Uncertainty != nil {
+		notes = append(notes, fmt.Sprintf("%s uncertainty (k=%g) from %s%s", name, t.K, joined(t.Covers, ""), notCovered(t.NotCovered)))
+	}
+	return notes
 }
 
 // windows is the table of TCR measures over the usual windows and the whole
