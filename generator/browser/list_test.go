@@ -61,8 +61,8 @@ func TestSortAndCopy(t *testing.T) {
 	var first string
 	var sorted string
 	if err := chromedp.Run(ctx, chromedp.Navigate(places(t)["file"]+"materials.html"),
-		chromedp.Focus("#list thead th:nth-child(4) button"), chromedp.KeyEvent("\r"),
-		chromedp.AttributeValue("#list thead th:nth-child(4)", "aria-sort", &sorted, nil),
+		chromedp.Focus("#list thead th:nth-child(2) button"), chromedp.KeyEvent("\r"),
+		chromedp.AttributeValue("#list thead th:nth-child(2)", "aria-sort", &sorted, nil),
 		chromedp.Evaluate(`Array.from(document.querySelectorAll("#list tbody tr")).find(r => !r.hidden).dataset.id`, &first)); err != nil {
 		t.Fatal(err)
 	}
