@@ -7,6 +7,8 @@
 package material
 
 import (
+	"unicode/utf8"
+
 	"ohmfolio/generator/form"
 	"ohmfolio/generator/place"
 	"ohmfolio/generator/quantity"
@@ -162,6 +164,30 @@ type Stock struct {
 	Note                       string
 	Source                     *Citation
 	Node                       *form.Node
+}
+
+// longName is from how many letters on a name is too long for a label.
+const longName = 24
+
+// ShortName is what labels and lists have room for: the short designation,
+// with the lot where there is one, else the name, else the ID.
+func (r *Record) ShortName() string {
+	short, lot := "", ""
+	for _, d := range r.Designations {
+		switch d.Key {
+		case "short":
+			short = d.Text
+		case "lot":
+			lot = " lot " + d.Text
+		}
+	}
+	switch {
+	case short != "":
+		return short + lot
+	case utf8.RuneCountInString(r.Name) <= longName:
+		return r.Name
+	}
+	return r.ID
 }
 
 // Property returns the property called name, nil when there is none.

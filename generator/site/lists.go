@@ -3,6 +3,7 @@ package site
 import (
 	"html/template"
 	"sort"
+	"strconv"
 	"strings"
 
 	"ohmfolio/generator/library"
@@ -76,7 +77,7 @@ func (s *site) citedBy() map[string][]link {
 	used := map[string][]link{}
 	for _, st := range s.in.Statements {
 		for _, row := range st.Sources {
-			used[row.ID] = append(used[row.ID], link{shortName(st.Record), "material/" + st.Record.ID + ".html"})
+			used[row.ID] = append(used[row.ID], link{st.Record.ShortName(), "material/" + st.Record.ID + ".html"})
 		}
 	}
 	return used
@@ -143,7 +144,7 @@ func (s *site) decisionRow(d *library.Document, o *study.Outcome, m study.Materi
 		row.Margin, row.margin = quantity.Fixed(*r.Margin*100, 1)+quantity.NarrowSpace+"%", *r.Margin
 	}
 	for _, e := range m.Evidence {
-		row.Evidence = e.Record + ", revision " + quantity.Number(float64(e.Revision), 6) + ", " + e.Fingerprint + ", " + e.Status
+		row.Evidence = e.Record + ", revision " + strconv.Itoa(e.Revision) + ", " + e.Fingerprint + ", " + e.Status
 	}
 	return row
 }

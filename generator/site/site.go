@@ -8,7 +8,6 @@ import (
 	"io/fs"
 
 	"ohmfolio/generator/library"
-	"ohmfolio/generator/material"
 	"ohmfolio/generator/output"
 	"ohmfolio/generator/place"
 	"ohmfolio/generator/statement"
@@ -149,14 +148,4 @@ func (s *site) materialLink(id, root string) link {
 		return link{st.Record.Name, root + "material/" + id + ".html"}
 	}
 	return link{id, ""}
-}
-
-// shortName is the short designation where there is one.
-func shortName(r *material.Record) string {
-	for _, d := range r.Designations {
-		if d.Key == "short" {
-			return d.Text
-		}
-	}
-	return r.Name
 }

@@ -6,6 +6,7 @@ import (
 	"html"
 	"html/template"
 	"strconv"
+	"strings"
 
 	"ohmfolio/generator/figure"
 	"ohmfolio/generator/quantity"
@@ -55,13 +56,17 @@ func (s *site) studyPart(w *bytes.Buffer, o *study.Outcome, stem string, i int, 
 
 func (s *site) short(id string) string {
 	if st := s.byID[id]; st != nil {
-		return shortName(st.Record)
+		return st.Record.ShortName()
 	}
 	return id
 }
 
 func requirementText(r study.Requirement) string {
-	return r.Name + " within " + quantity.Number(r.Limit, 4) + " ppm"
+	unit := "ppm"
+	if r.Name == "box" {
+		unit = "ppm/K"
+	}
+	return strings.ReplaceAll(r.Name, "_", " ") + " within " + quantity.Number(r.Limit, 4) + quantity.NarrowSpace + unit
 }
 
 // chartFigure gives each series an ink and a dash; after four inks the dashes

@@ -52,13 +52,13 @@ func (t *tableWriter) row(cells []string, first string) {
 	for i, c := range cells {
 		switch {
 		case i == 0 && first != "":
-			t.b.WriteString(`<th scope="row">` + first + "</th>")
+			t.b.WriteString(`<th scope="row"` + wideClass(c) + `>` + first + "</th>")
 		case i == 0 && wholeNumber(c):
 			t.b.WriteString(`<th scope="row" class="n">`)
 			t.text(c)
 			t.b.WriteString("</th>")
 		case i == 0:
-			t.b.WriteString(`<th scope="row">`)
+			t.b.WriteString(`<th scope="row"` + wideClass(c) + `>`)
 			t.text(c)
 			t.b.WriteString("</th>")
 		case numeric(c):
@@ -76,6 +76,13 @@ func (t *tableWriter) row(cells []string, first string) {
 		}
 	}
 	t.b.WriteString("</tr>\n")
+}
+
+func wideClass(cell string) string {
+	if len(cell) > wideCell {
+		return ` class="w"`
+	}
+	return ""
 }
 
 func (t *tableWriter) end(notes []string) template.HTML {

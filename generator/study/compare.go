@@ -3,6 +3,7 @@ package study
 import (
 	"math"
 	"sort"
+	"strings"
 
 	"ohmfolio/generator/curve"
 	"ohmfolio/generator/form"
@@ -100,10 +101,13 @@ func (c *comparison) parameters() bool {
 	c.out.Parameters = []Parameter{
 		{"window", quantity.CelsiusText(c.lo) + " to " + quantity.CelsiusText(c.hi)},
 		{"reference temperature", quantity.CelsiusText(c.reference)},
-		{"figure shows", c.show}, {"ranked by", c.rank},
+		{"figure shows", inWords(c.show)}, {"ranked by", inWords(c.rank)},
 	}
 	return true
 }
+
+// inWords turns the name of a number into words.
+func inWords(name string) string { return strings.ReplaceAll(name, "_", " ") }
 
 // judge adds one material: found, measured over the window or the part of it
 // that its data cover, and held against what is required.

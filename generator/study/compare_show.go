@@ -5,8 +5,11 @@ import (
 	"ohmfolio/generator/quantity"
 )
 
-// columns of the table of every measure: number's name and head.
-var compareColumns = []struct{ name, head string }{
+// column is one column of a table.
+type column struct{ name, head string }
+
+// compareColumns of the table of every measure: number's name and head.
+var compareColumns = []column{
 	{rankRho, "ρ"}, {"slope", "slope, ppm/K"}, {"chord_cold", "chord cold, ppm/K"}, {"chord_hot", "chord hot, ppm/K"},
 	{rankBox, "box, ppm/K"}, {"change_least", "least change"}, {"change_most", "greatest rise"}, {rankChange, "greatest change"},
 	{"greatest_at", "at, °C"},
@@ -30,9 +33,26 @@ func (c *comparison) tables() {
 	}
 }
 
+// columns leaves out a chord that no material has, because the reference
+// temperature stands at that edge of the window.
+func (c *comparison) columns() []column {
+	var list []column
+	for _, col := range compareColumns {
+		there := col.name != "chord_cold" && col.name != "chord_hot"
+		for _, m := range c.out.Materials {
+			_, has := m.Numbers[col.name]
+			there = there || has
+		}
+		if there {
+			list = append(list, col)
+		}
+	}
+	return list
+}
+
 func (c *comparison) heads(part bool) []string {
 	heads := []string{"Material"}
-	for _, col := range compareColumns {
+	for _, col := range c.columns() {
 		if col.name == rankRho {
 			heads = append(heads, "ρ, "+c.houseUnit().Symbol)
 			continue
@@ -50,7 +70,7 @@ func (c *comparison) heads(part bool) []string {
 
 func (c *comparison) row(m MaterialOutcome) []string {
 	row := []string{m.Record.Name}
-	for _, col := range compareColumns {
+	for _, col := range c.columns() {
 		row = append(row, c.cell(m, col.name))
 	}
 	if len(c.bounds()) > 0 {
@@ -121,10 +141,7 @@ func (c *comparison) series(m MaterialOutcome) (Series, bool) {
 		read = material.Reading{Told: set.Rho}
 	}
 	convert := c.conversion()
-	s := Series{Label: m.Record.Name}
-	if short := shortName(m.Record); short != "" {
-		s.Label = short
-	}
+	s := Series{Label: m.Record.ShortName()}
 	lo, hi := max(c.lo, set.Valid.Lo), min(c.hi, set.Valid.Hi)
 	for i := 0; i < seriesPoints; i++ {
 		t := lo + float64((hi-lo)*float64(i)/(seriesPoints-1))
@@ -153,14 +170,4 @@ func (c *comparison) conversion() func(float64) float64 {
 		return func(x float64) float64 { return float64((x - 1) * 100) }
 	}
 	return func(x float64) float64 { return float64((x - 1) * 1e6) }
-}
-
-// shortName is the short designation, for labels on curves.
-func shortName(r *material.Record) string {
-	for _, d := range r.Designations {
-		if d.Key == "short" {
-			return d.Text
-		}
-	}
-	return ""
 }

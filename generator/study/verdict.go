@@ -44,7 +44,7 @@ func (c *comparison) require(m *MaterialOutcome) {
 		m.Requirements = append(m.Requirements, r)
 		m.Verdict = worse(m.Verdict, r.Verdict)
 		if r.Verdict != Holds {
-			m.Reasons = append(m.Reasons, b.name+" "+string(r.Verdict)+": "+m.Numbers[b.name].Text+" against "+quantity.Number(b.limit, 4)+" "+m.Numbers[b.name].Unit)
+			m.Reasons = append(m.Reasons, inWords(b.name)+" "+string(r.Verdict)+": "+m.Numbers[b.name].Text+" against "+quantity.Number(b.limit, 4)+" "+m.Numbers[b.name].Unit)
 		}
 	}
 }
