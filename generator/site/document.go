@@ -71,7 +71,7 @@ func (s *site) body(d *library.Document, root string) template.HTML {
 	err := d.Page.HTML(&b, words.Fill{
 		Study: func(i int, w *bytes.Buffer) {
 			if i < len(outcomes) {
-				s.studyPart(w, outcomes[i], d.Stem, i, root)
+				s.studyPart(w, outcomes[i], d, i, root)
 			}
 		},
 		Number: func(i int) string { return s.liveNumber(d.Page.Numbers[i], root) },

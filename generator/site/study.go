@@ -9,6 +9,7 @@ import (
 	"strings"
 
 	"ohmfolio/generator/figure"
+	"ohmfolio/generator/library"
 	"ohmfolio/generator/quantity"
 	"ohmfolio/generator/study"
 )
@@ -16,6 +17,7 @@ import (
 // studyPart is what study-part.tmpl prints.
 type studyPart struct {
 	ID       string
+	Deep     bool // stands under a heading of the page, not right under its title
 	O        *study.Outcome
 	Figures  []*figure.Figure
 	Tables   []template.HTML
@@ -25,10 +27,10 @@ type studyPart struct {
 	Evidence []string
 }
 
-func (s *site) studyPart(w *bytes.Buffer, o *study.Outcome, stem string, i int, root string) {
-	p := studyPart{ID: "study-" + strconv.Itoa(i+1), O: o}
+func (s *site) studyPart(w *bytes.Buffer, o *study.Outcome, d *library.Document, i int, root string) {
+	p := studyPart{ID: "study-" + strconv.Itoa(i+1), O: o, Deep: d.Page.Studies[i].Level > 1}
 	for n, c := range o.Charts {
-		p.Figures = append(p.Figures, chartFigure(c, fmt.Sprintf("%s-%d-%d", stem, i+1, n+1)))
+		p.Figures = append(p.Figures, chartFigure(c, fmt.Sprintf("%s-%d-%d", d.Stem, i+1, n+1)))
 	}
 	for _, t := range o.Tables {
 		p.Tables = append(p.Tables, s.studyTable(t, root))

@@ -25,7 +25,7 @@ func (c *collector) fence(n *ast.FencedCodeBlock) {
 	at := c.position(n.Info.Segment.Start, utf8.RuneCountInString(info))
 	body := c.body(n, at)
 	n.SetAttributeString("study", len(c.page.Studies))
-	c.page.Studies = append(c.page.Studies, Study{Name: strings.TrimSpace(strings.TrimPrefix(info, studyInfo)), Body: body, Position: at})
+	c.page.Studies = append(c.page.Studies, Study{Name: strings.TrimSpace(strings.TrimPrefix(info, studyInfo)), Body: body, Position: at, Level: max(1, c.level)})
 }
 
 // body copies the lines of a block. In a list or a quote they stand further

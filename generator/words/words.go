@@ -43,6 +43,7 @@ type Study struct {
 	Name     string
 	Body     *place.Source
 	Position place.Position
+	Level    int // of the heading that it stands under: 1 right under the title
 }
 
 // LiveNumber is a link to a record whose title is a question.
@@ -97,6 +98,7 @@ type collector struct {
 	list  *place.List
 	ids   map[string]bool
 	lines []int
+	level int // of the last heading
 }
 
 func (c *collector) collect() {
@@ -163,6 +165,7 @@ func plainText(n ast.Node, source []byte) string {
 
 func (c *collector) heading(n *ast.Heading) {
 	title := plainText(n, c.page.source)
+	c.level = n.Level
 	if n.Level == 1 && c.page.Title == "" {
 		c.page.Title = title
 		return
