@@ -26,11 +26,11 @@ func (n *Node) Canonical(w *bytes.Buffer, skip func(key string) bool) {
 		}
 		w.WriteByte(']')
 	case n.has == isQuantity:
-		canonicalQuantity(w, n.quantity)
+		canonicalQuantity(w, n.typed.quantity)
 	case n.has == isRange:
-		canonicalNumber(w, n.quantity.Value)
-		canonicalNumber(w, n.high.Value)
-	case n.has == isNumber:
+		canonicalNumber(w, n.typed.quantity.Value)
+		canonicalNumber(w, n.typed.high.Value)
+	case n.has == isNumber, n.has == isInteger:
 		canonicalNumber(w, n.number)
 	case n.has == isYesNo:
 		w.WriteString(strconv.FormatBool(n.yes))

@@ -8,20 +8,33 @@ import (
 // A Node is a checked value. All methods are safe on nil, which stands for a
 // key that is absent.
 type Node struct {
-	at    place.Position
-	keyAt place.Position
-	text  string
-	keys  []string
-	items []*Node // values of a mapping (with keys) or elements of a list
-
-	integer   int
-	number    float64
-	yes       bool
+	src       *place.Source
+	at, keyAt spot
 	has       what
-	quantity  quantity.Quantity
-	high      quantity.Quantity // upper end of a range
-	rows      [][]float64
-	converted bool // the typed value above is good
+	converted bool // the typed value below is good
+	yes       bool
+	text      string
+	keys      []string
+	items     []*Node // values of a mapping (with keys) or elements of a list
+	number    float64 // also of an integer
+	typed     *typed  // nil for texts and plain numbers
+}
+
+// spot is a place without its file: a record has a hundred nodes, and a
+// library thousands of records.
+type spot struct{ line, column, length int32 }
+
+func (s spot) in(src *place.Source) place.Position {
+	if src == nil || s.line == 0 {
+		return place.Position{}
+	}
+	return place.Position{File: src.File, Line: int(s.line), Column: int(s.column), Length: int(s.length)}
+}
+
+// typed is the value of a quantity, a range or a list of rows.
+type typed struct {
+	quantity, high quantity.Quantity // high is the upper end of a range
+	rows           [][]float64
 }
 
 // Get returns the value at key, nil when it is absent.
@@ -53,7 +66,7 @@ func (n *Node) Int() (int, bool) {
 	if n == nil || n.has != isInteger {
 		return 0, false
 	}
-	return n.integer, n.converted
+	return int(n.number), n.converted
 }
 
 // Number is the plain number; false when there is none.
@@ -88,26 +101,26 @@ func (n *Node) IsMapping() bool { return n != nil && (n.has == isMapping || n.ha
 
 // Quantity is the number with its unit; false when there is none.
 func (n *Node) Quantity() (quantity.Quantity, bool) {
-	if n == nil || n.has != isQuantity {
+	if n == nil || n.has != isQuantity || n.typed == nil {
 		return quantity.Quantity{}, false
 	}
-	return n.quantity, n.converted
+	return n.typed.quantity, n.converted
 }
 
 // Range is the pair of values; false when there is none.
 func (n *Node) Range() (lo, hi quantity.Quantity, ok bool) {
-	if n == nil || n.has != isRange {
+	if n == nil || n.has != isRange || n.typed == nil {
 		return lo, hi, false
 	}
-	return n.quantity, n.high, n.converted
+	return n.typed.quantity, n.typed.high, n.converted
 }
 
 // Rows are the lists of numbers; nil when there are none.
 func (n *Node) Rows() [][]float64 {
-	if n == nil {
+	if n == nil || n.typed == nil {
 		return nil
 	}
-	return n.rows
+	return n.typed.rows
 }
 
 // Position is where the value stands; the zero Position for nil.
@@ -115,7 +128,7 @@ func (n *Node) Position() place.Position {
 	if n == nil {
 		return place.Position{}
 	}
-	return n.at
+	return n.at.in(n.src)
 }
 
 // KeyPosition is where the key stands that leads to the value; where the
@@ -124,8 +137,8 @@ func (n *Node) KeyPosition() place.Position {
 	if n == nil {
 		return place.Position{}
 	}
-	if n.keyAt.Line == 0 {
-		return n.at
+	if n.keyAt.line == 0 {
+		return n.at.in(n.src)
 	}
-	return n.keyAt
+	return n.keyAt.in(n.src)
 }

@@ -163,3 +163,13 @@ func (r *reader) at(n *yaml.Node) place.Position {
 	}
 	return place.Position{File: r.src.File, Line: n.Line + r.src.First - 1, Column: n.Column + r.src.Shift, Length: max(1, length)}
 }
+
+// spot is r.at without the file.
+func (r *reader) spot(n *yaml.Node) spot {
+	p := r.at(n)
+	return spot{int32(p.Line), int32(p.Column), int32(p.Length)}
+}
+
+func (r *reader) node(y *yaml.Node, w what) *Node {
+	return &Node{src: r.src, at: r.spot(y), has: w}
+}

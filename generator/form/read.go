@@ -147,7 +147,7 @@ func (r *reader) mapping(y *yaml.Node, s *Shape, depth int) *Node {
 		r.wrongType(y, Mapping(s))
 		return nil
 	}
-	n := &Node{at: r.at(y), has: isMapping}
+	n := r.node(y, isMapping)
 	r.pairs(y, n, func(key *yaml.Node) (Type, bool) {
 		f := s.field(key.Value)
 		if f == nil {
@@ -158,7 +158,7 @@ func (r *reader) mapping(y *yaml.Node, s *Shape, depth int) *Node {
 	}, depth)
 	for _, f := range s.Fields {
 		if f.Required && !hasKey(y, f.Key) {
-			r.add("key-missing", n.at, s.Name+" needs the key "+f.Key, "add "+f.Key+": "+f.Example)
+			r.add("key-missing", n.Position(), s.Name+" needs the key "+f.Key, "add "+f.Key+": "+f.Example)
 		}
 	}
 	return n
@@ -187,7 +187,7 @@ func (r *reader) named(y *yaml.Node, of Type, depth int) *Node {
 		r.wrongType(y, Named(of))
 		return nil
 	}
-	n := &Node{at: r.at(y), has: isNamed}
+	n := r.node(y, isNamed)
 	r.pairs(y, n, func(*yaml.Node) (Type, bool) { return of, true }, depth)
 	return n
 }
@@ -199,7 +199,7 @@ func (r *reader) pairs(y *yaml.Node, n *Node, typeOf func(key *yaml.Node) (Type,
 		if !r.key(y, i) || r.splitNumber(y, i) {
 			continue
 		}
-		if at := r.repeated(n, key); at != nil {
+		if r.repeated(n, key) {
 			continue
 		}
 		t, ok := typeOf(key)
@@ -210,7 +210,7 @@ func (r *reader) pairs(y *yaml.Node, n *Node, typeOf func(key *yaml.Node) (Type,
 		if v == nil {
 			continue
 		}
-		v.keyAt = r.at(key)
+		v.keyAt = r.spot(key)
 		n.keys, n.items = append(n.keys, key.Value), append(n.items, v)
 	}
 }
@@ -249,14 +249,14 @@ func (r *reader) splitNumber(y *yaml.Node, i int) bool {
 func digit(c byte) bool { return c >= '0' && c <= '9' }
 
 // repeated reports a key that stands twice, with the other place.
-func (r *reader) repeated(n *Node, key *yaml.Node) *place.Position {
+func (r *reader) repeated(n *Node, key *yaml.Node) bool {
 	first := n.Get(key.Value)
 	if first == nil {
-		return nil
+		return false
 	}
 	f := r.add("key-repeated", r.at(key), "the key "+quote(key.Value)+" stands twice", "keep one of the two")
-	f.Also = &place.Also{Position: first.keyAt, Message: "it stands here already"}
-	return &first.keyAt
+	f.Also = &place.Also{Position: first.KeyPosition(), Message: "it stands here already"}
+	return true
 }
 
 func (r *reader) sequence(y *yaml.Node, of Type, depth int) *Node {
@@ -264,7 +264,7 @@ func (r *reader) sequence(y *yaml.Node, of Type, depth int) *Node {
 		r.wrongType(y, List(of))
 		return nil
 	}
-	n := &Node{at: r.at(y), has: isList}
+	n := r.node(y, isList)
 	for _, e := range y.Content {
 		if v := r.value(e, of, depth+1); v != nil {
 			n.items = append(n.items, v)
@@ -278,14 +278,15 @@ func (r *reader) numberRows(y *yaml.Node) *Node {
 		r.wrongType(y, Rows)
 		return nil
 	}
-	n := &Node{at: r.at(y), has: isRows, converted: true}
+	n := r.node(y, isRows)
+	n.converted, n.typed = true, &typed{}
 	for _, row := range y.Content {
 		item, values, ok := r.numberRow(row)
 		if !ok {
 			n.converted = false
 			continue
 		}
-		n.items, n.rows = append(n.items, item), append(n.rows, values)
+		n.items, n.typed.rows = append(n.items, item), append(n.typed.rows, values)
 	}
 	return n
 }
@@ -295,7 +296,7 @@ func (r *reader) numberRow(y *yaml.Node) (*Node, []float64, bool) {
 		r.add("type-wrong", r.at(y), kindOf(y)+" stands where a row of numbers is needed", "write [temperature, value]")
 		return nil, nil, false
 	}
-	n := &Node{at: r.at(y), has: isList}
+	n := r.node(y, isList)
 	values := make([]float64, 0, len(y.Content))
 	for _, c := range y.Content {
 		x, ok := r.finite(c)
@@ -303,7 +304,9 @@ func (r *reader) numberRow(y *yaml.Node) (*Node, []float64, bool) {
 			return nil, nil, false
 		}
 		values = append(values, x)
-		n.items = append(n.items, &Node{at: r.at(c), text: c.Value, has: isNumber, number: x, converted: true})
+		item := r.node(c, isNumber)
+		item.text, item.number, item.converted = c.Value, x, true
+		n.items = append(n.items, item)
 	}
 	return n, values, true
 }
@@ -327,9 +330,10 @@ func (r *reader) scalar(y *yaml.Node, t Type) *Node {
 		r.wrongType(y, t)
 		return nil
 	}
-	n := &Node{at: r.at(y), text: y.Value, has: t.what, converted: true}
+	n := r.node(y, t.what)
+	n.text, n.converted = y.Value, true
 	if y.Value == "" {
-		r.add("value-missing", n.at, "no value stands here", "write "+t.describe()+", or take the key out")
+		r.add("value-missing", n.Position(), "no value stands here", "write "+t.describe()+", or take the key out")
 		return nil
 	}
 	switch t.what {
@@ -342,23 +346,23 @@ func (r *reader) scalar(y *yaml.Node, t Type) *Node {
 	case isDate:
 		if _, err := time.Parse("2006-01-02", y.Value); err != nil {
 			n.converted = false
-			r.add("date-not-read", n.at, quote(y.Value)+" is no date", "write year-month-day: 2026-05-04")
+			r.add("date-not-read", n.Position(), quote(y.Value)+" is no date", "write year-month-day: 2026-05-04")
 		}
 	case isOneOf:
 		r.oneOf(y, n, t)
 	case isQuantity:
 		q, p := quantity.ParseOneOf(y.Value, t.kinds...)
-		n.quantity, n.converted = q, r.problem(y, p)
+		n.typed, n.converted = &typed{quantity: q}, r.problem(y, p)
 	case isRange:
 		lo, hi, p := quantity.ParseRange(t.kinds[0], y.Value)
-		n.quantity, n.high, n.converted = lo, hi, r.problem(y, p)
+		n.typed, n.converted = &typed{quantity: lo, high: hi}, r.problem(y, p)
 	}
 	return n
 }
 
 func (r *reader) integer(y *yaml.Node, n *Node, t Type) {
 	x, err := strconv.Atoi(y.Value)
-	n.integer, n.converted = x, err == nil
+	n.number, n.converted = float64(x), err == nil
 	if err != nil {
 		r.wrongType(y, t)
 	}
@@ -386,7 +390,7 @@ func (r *reader) oneOf(y *yaml.Node, n *Node, t Type) {
 	if near := place.Near(y.Value, t.words); near != "" {
 		mend = "did you mean " + near + "? Otherwise " + mend
 	}
-	r.add("word-unknown", n.at, quote(y.Value)+" is not one of the words known here", mend)
+	r.add("word-unknown", n.Position(), quote(y.Value)+" is not one of the words known here", mend)
 }
 
 // problem turns a quantity's problem into a finding with its caret inside the
