@@ -17,6 +17,7 @@ import (
 	"ohmfolio/generator/examine"
 	"ohmfolio/generator/export"
 	"ohmfolio/generator/library"
+	"ohmfolio/generator/material"
 	"ohmfolio/generator/output"
 	"ohmfolio/generator/place"
 	"ohmfolio/generator/site"
@@ -97,7 +98,7 @@ func (s *session) runPublish(into, reportFile string) error {
 // relaxCollector trades memory for time: many small pages make much garbage.
 func relaxCollector() {
 	debug.SetGCPercent(400)
-	debug.SetMemoryLimit(120 << 20)
+	debug.SetMemoryLimit(128 << 20)
 }
 
 func joinError(first, second error) error {
@@ -157,12 +158,12 @@ func (s *session) write(lib *library.Library, outcomes []examine.Judged, finding
 
 // Outputs joins the pages and the data files of a reference.
 func Outputs(lib *library.Library, outcomes []examine.Judged, findings []place.Finding, theme fs.FS) ([]output.Output, error) {
-	statements := statementsOf(lib)
-	in := &site.Input{Library: lib, Statements: statements, Outcomes: map[string][]*study.Outcome{}, Findings: findings, Theme: theme}
+	in := &site.Input{Library: lib, Outcomes: map[string][]*study.Outcome{}, Findings: findings, Theme: theme}
 	for _, j := range outcomes {
 		key := strings.TrimPrefix(j.Document.Room+"/"+j.Document.Stem, "/")
 		in.Outcomes[key] = append(in.Outcomes[key], j.Outcome)
 	}
+	in.Statement = func(r *material.Record) *statement.Statement { return statement.Of(lib, r) }
 	in.Answer = func(question, written, id string) (string, string, bool) {
 		r := lib.Material(id)
 		if r == nil {
@@ -175,25 +176,7 @@ func Outputs(lib *library.Library, outcomes []examine.Judged, findings []place.F
 	if err != nil {
 		return nil, err
 	}
-	return append(pages, export.Outputs(lib, statements)...), nil
-}
-
-// statementsOf computes the statements in parallel.
-func statementsOf(lib *library.Library) []*statement.Statement {
-	list := make([]*statement.Statement, len(lib.Materials))
-	n := runtime.GOMAXPROCS(0)
-	var wait sync.WaitGroup
-	for i := range n {
-		wait.Add(1)
-		go func() {
-			defer wait.Done()
-			for j := i; j < len(list); j += n {
-				list[j] = statement.Of(lib, lib.Materials[j])
-			}
-		}()
-	}
-	wait.Wait()
-	return list
+	return append(pages, export.Outputs(lib)...), nil
 }
 
 // themeOf is the built-in theme, which the folder's own themes/ overrides

@@ -6,9 +6,9 @@ import (
 	"math"
 	"strconv"
 
+	"ohmfolio/generator/library"
 	"ohmfolio/generator/material"
 	"ohmfolio/generator/quantity"
-	"ohmfolio/generator/statement"
 )
 
 // csvPoints is how many rows a curve has: end to end in even steps.
@@ -20,16 +20,16 @@ var csvHeads = []string{"material", "data_set", "revision", "fingerprint", "stat
 	"resistance_ratio", "ratio_reference_C", "resistivity_lower_ohm_m", "resistivity_upper_ohm_m"}
 
 // writeCSV writes the adopted curve over its valid range; outside: do not use.
-func writeCSV(w *bytes.Buffer, s *statement.Statement) error {
+func writeCSV(w *bytes.Buffer, r *material.Record) error {
 	c := csv.NewWriter(w)
 	c.UseCRLF = true // RFC 4180
 	if err := c.Write(csvHeads); err != nil {
 		return err
 	}
-	set := s.Record.Adopted
+	set := r.Adopted
 	if set != nil {
 		for _, t := range csvTemperatures(set) {
-			if err := c.Write(csvRow(s, set, t)); err != nil {
+			if err := c.Write(csvRow(r, set, t)); err != nil {
 				return err
 			}
 		}
@@ -50,8 +50,7 @@ func csvTemperatures(set *material.DataSet) []float64 {
 	return list
 }
 
-func csvRow(s *statement.Statement, set *material.DataSet, t float64) []string {
-	r := s.Record
+func csvRow(r *material.Record, set *material.DataSet, t float64) []string {
 	row := []string{r.ID, set.Name, strconv.Itoa(r.Revision), r.Fingerprint, string(r.Status), number(t - quantity.ZeroCelsius)}
 	row = append(row, told(set.Rho, t), told(set.Ratio, t))
 	if set.Ratio == nil {
@@ -113,10 +112,10 @@ type csvwColumn struct {
 	UCUM        string `json:"schema:unitCode,omitempty"`
 }
 
-func describeCSV(statements []*statement.Statement) csvwTables {
+func describeCSV(lib *library.Library) csvwTables {
 	t := csvwTables{Context: "http://www.w3.org/ns/csvw", Tables: []csvwTable{}}
-	for _, s := range statements {
-		t.Tables = append(t.Tables, csvwTable{URL: s.Record.ID + ".csv", Title: s.Record.Name})
+	for _, r := range lib.Materials {
+		t.Tables = append(t.Tables, csvwTable{URL: r.ID + ".csv", Title: r.Name})
 	}
 	column := func(name, datatype, unit, description string) {
 		t.TableSchema.Columns = append(t.TableSchema.Columns, csvwColumn{name, name, datatype, description, unit})

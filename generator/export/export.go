@@ -10,20 +10,19 @@ import (
 
 	"ohmfolio/generator/library"
 	"ohmfolio/generator/output"
-	"ohmfolio/generator/statement"
 )
 
-// Outputs lists the data files for all statements.
-func Outputs(lib *library.Library, statements []*statement.Statement) []output.Output {
+// Outputs lists the data files of a reference.
+func Outputs(lib *library.Library) []output.Output {
 	var list []output.Output
-	for _, s := range statements {
+	for _, r := range lib.Materials {
 		list = append(list,
-			output.Output{Path: "data/" + s.Record.ID + ".json", Write: func(w *bytes.Buffer) error { return writeJSON(w, Material(lib, s)) }},
-			output.Output{Path: "data/" + s.Record.ID + ".csv", Write: func(w *bytes.Buffer) error { return writeCSV(w, s) }})
+			output.Output{Path: "data/" + r.ID + ".json", Write: func(w *bytes.Buffer) error { return writeJSON(w, Material(lib, r)) }},
+			output.Output{Path: "data/" + r.ID + ".csv", Write: func(w *bytes.Buffer) error { return writeCSV(w, r) }})
 	}
 	return append(list,
-		output.Output{Path: "data/reference.json", Write: func(w *bytes.Buffer) error { return writeReference(w, lib, statements) }},
-		output.Output{Path: "data/csv-metadata.json", Write: func(w *bytes.Buffer) error { return writeJSON(w, describeCSV(statements)) }})
+		output.Output{Path: "data/reference.json", Write: func(w *bytes.Buffer) error { return writeReference(w, lib) }},
+		output.Output{Path: "data/csv-metadata.json", Write: func(w *bytes.Buffer) error { return writeJSON(w, describeCSV(lib)) }})
 }
 
 func writeJSON(w *bytes.Buffer, v any) error {
@@ -33,18 +32,32 @@ func writeJSON(w *bytes.Buffer, v any) error {
 	return e.Encode(v)
 }
 
-type referenceJSON struct {
-	Title        string         `json:"title"`
-	Organisation string         `json:"organisation"`
-	Materials    []MaterialJSON `json:"materials"`
+type referenceHead struct {
+	Title        string `json:"title"`
+	Organisation string `json:"organisation"`
 }
 
-func writeReference(w *bytes.Buffer, lib *library.Library, statements []*statement.Statement) error {
-	r := referenceJSON{Title: lib.Settings.Title, Organisation: lib.Settings.Organisation, Materials: []MaterialJSON{}}
-	for _, s := range statements {
-		r.Materials = append(r.Materials, Material(lib, s))
+// writeReference writes material by material, so that the whole is never held
+// in memory twice.
+func writeReference(w *bytes.Buffer, lib *library.Library) error {
+	head, err := json.Marshal(referenceHead{lib.Settings.Title, lib.Settings.Organisation})
+	if err != nil {
+		return err
 	}
+	w.Write(head[:len(head)-1])
+	w.WriteString(",\"materials\":[")
 	e := json.NewEncoder(w)
 	e.SetEscapeHTML(false)
-	return e.Encode(r)
+	for i, r := range lib.Materials {
+		if i > 0 {
+			w.WriteByte(',')
+		}
+		w.WriteByte('\n')
+		if err := e.Encode(Material(lib, r)); err != nil {
+			return err
+		}
+		w.Truncate(w.Len() - 1) // the encoder's own line end
+	}
+	w.WriteString("\n]}\n")
+	return nil
 }

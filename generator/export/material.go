@@ -7,7 +7,6 @@ import (
 	"ohmfolio/generator/library"
 	"ohmfolio/generator/material"
 	"ohmfolio/generator/quantity"
-	"ohmfolio/generator/statement"
 )
 
 // MaterialJSON is data/ID.json; the names are a contract.
@@ -83,8 +82,7 @@ type SegmentJSON struct {
 }
 
 // Material gives the data of one material.
-func Material(lib *library.Library, s *statement.Statement) MaterialJSON {
-	r := s.Record
+func Material(lib *library.Library, r *material.Record) MaterialJSON {
 	m := MaterialJSON{ID: r.ID, Name: r.Name, Status: string(r.Status), Invented: r.Invented, Revision: r.Revision,
 		Fingerprint: r.Fingerprint, Family: string(r.Family), DataSets: []DataSetJSON{}, Properties: []PropertyJSON{}}
 	for _, set := range r.Sets {

@@ -12,7 +12,6 @@ import (
 	"ohmfolio/generator/material"
 	"ohmfolio/generator/output"
 	"ohmfolio/generator/quantity"
-	"ohmfolio/generator/statement"
 )
 
 // listRow is one material in the lists. The Value fields are for sorting, ""
@@ -27,11 +26,10 @@ type listRow struct {
 
 const twenty = quantity.ZeroCelsius + 20
 
-func row(st *statement.Statement) listRow {
-	r := st.Record
+func (s *site) row(r *material.Record) listRow {
 	l := listRow{ID: r.ID, Name: r.Name, Family: or(string(r.Family), "not stated"), Status: statusText(r), Rho: "not told at 20\u202f°C", Slope: "no coefficient",
 		Change: "not told", Warm: "not told", EMF: propertyText(r, "emf_to_copper"), Density: propertyText(r, "density"), Service: serviceText(r)}
-	set := st.Set
+	set := r.Adopted
 	if set == nil {
 		return l
 	}
@@ -40,7 +38,7 @@ func row(st *statement.Statement) listRow {
 		l.Range = "one temperature, " + quantity.CelsiusText(set.Valid.Lo)
 	}
 	if v, ok := (material.Reading{Told: set.Rho}).At(twenty); ok {
-		x := st.Units.Resistivity.FromSI(v)
+		x := s.units.Resistivity.FromSI(v)
 		l.Rho, l.RhoValue = quantity.Number(x, set.Digits()), plain(x)
 	}
 	l.Slope, l.SlopeValue = slopeAt20(set)
@@ -126,18 +124,15 @@ type materialsPage struct {
 
 func (s *site) rows() []listRow {
 	var rows []listRow
-	for _, st := range s.in.Statements {
-		rows = append(rows, row(st))
+	for _, r := range s.in.Library.Materials {
+		rows = append(rows, s.row(r))
 	}
 	sort.SliceStable(rows, func(i, j int) bool { return strings.ToLower(rows[i].Name) < strings.ToLower(rows[j].Name) })
 	return rows
 }
 
 func (s *site) unit() string {
-	if len(s.in.Statements) > 0 {
-		return s.in.Statements[0].Units.Resistivity.Symbol
-	}
-	return "µΩ·cm"
+	return s.units.Resistivity.Symbol
 }
 
 func (s *site) materials() output.Output {
@@ -173,10 +168,10 @@ type listed struct {
 
 // listScript is the data of the list as a script: pages opened as files may
 // not fetch their neighbours.
-func listScript(in *Input) []byte {
+func (s *site) listScript() []byte {
 	list := []listed{}
-	for _, st := range in.Statements {
-		list = append(list, listedOf(st))
+	for _, r := range s.in.Library.Materials {
+		list = append(list, s.listedOf(r))
 	}
 	text, err := json.Marshal(list) // escapes <, > and &, so no text can end the script
 	if err != nil {
@@ -189,18 +184,18 @@ func listScript(in *Input) []byte {
 	return b.Bytes()
 }
 
-func listedOf(st *statement.Statement) listed {
-	r := st.Record
+func (s *site) listedOf(r *material.Record) listed {
+	set := r.Adopted
 	l := listed{ID: r.ID, Family: string(r.Family), Status: string(r.Status), Words: findWords(r)}
-	if st.Set == nil {
+	if set == nil {
 		return l
 	}
-	if v, ok := (material.Reading{Told: st.Set.Rho}).At(twenty); ok {
-		x := quantity.Round12(st.Units.Resistivity.FromSI(v))
+	if v, ok := (material.Reading{Told: set.Rho}).At(twenty); ok {
+		x := quantity.Round12(s.units.Resistivity.FromSI(v))
 		l.Rho = &x
 	}
-	if st.Set.Ratio.HasNominal() && st.Set.Valid.Hi > st.Set.Valid.Lo {
-		for _, g := range st.Set.Ratio.Nominal.Segments {
+	if set.Ratio.HasNominal() && set.Valid.Hi > set.Valid.Lo {
+		for _, g := range set.Ratio.Nominal.Segments {
 			l.Ratio = append(l.Ratio, [7]float64{g.From, g.To, g.Centre, round12(g.C[0]), round12(g.C[1]), round12(g.C[2]), round12(g.C[3])})
 		}
 	}

@@ -25,9 +25,9 @@ type homePage struct {
 
 func (s *site) home() output.Output {
 	return s.page("index.html", "home-page", func() any {
-		p := homePage{frame: s.frame("Home", "home", "", ""), Count: len(s.in.Statements), Reports: s.pages("reports"), Guides: s.pages("guides")}
-		for _, st := range s.in.Statements {
-			if st.Record.Status == material.Released {
+		p := homePage{frame: s.frame("Home", "home", "", ""), Count: len(s.in.Library.Materials), Reports: s.pages("reports"), Guides: s.pages("guides")}
+		for _, r := range s.in.Library.Materials {
+			if r.Status == material.Released {
 				p.Released++
 			}
 		}
@@ -75,9 +75,9 @@ func checkedText(src *library.Source) string {
 
 func (s *site) citedBy() map[string][]link {
 	used := map[string][]link{}
-	for _, st := range s.in.Statements {
-		for _, row := range st.Sources {
-			used[row.ID] = append(used[row.ID], link{st.Record.ShortName(), "material/" + st.Record.ID + ".html"})
+	for _, r := range s.in.Library.Materials {
+		for _, row := range statement.SourcesOf(s.in.Library, r) {
+			used[row.ID] = append(used[row.ID], link{r.ShortName(), "material/" + r.ID + ".html"})
 		}
 	}
 	return used
@@ -170,8 +170,8 @@ type findingRow struct{ Severity, Where, Message, Code string }
 func (s *site) review() output.Output {
 	return s.page("review.html", "review-page", func() any {
 		p := reviewPage{frame: s.frame("State of review", "review", "", "", "review.js")}
-		for _, st := range s.in.Statements {
-			s.reviewOf(&p, st)
+		for _, r := range s.in.Library.Materials {
+			s.reviewOf(&p, r)
 		}
 		sort.SliceStable(p.Due, func(i, j int) bool { return p.Due[i].Due < p.Due[j].Due })
 		for _, f := range s.in.Findings {
@@ -183,8 +183,7 @@ func (s *site) review() output.Output {
 	})
 }
 
-func (s *site) reviewOf(p *reviewPage, st *statement.Statement) {
-	r := st.Record
+func (s *site) reviewOf(p *reviewPage, r *material.Record) {
 	if r.SignOff != nil && r.SignOff.Due != "" && r.Status != material.Withdrawn {
 		p.Due = append(p.Due, dueRow{r.ID, r.Name, r.SignOff.Date, r.SignOff.Due, r.Revision})
 	}
@@ -192,7 +191,7 @@ func (s *site) reviewOf(p *reviewPage, st *statement.Statement) {
 		p.Open = append(p.Open, openRow{ID: r.ID, Name: r.Name, Status: statusText(r)})
 	}
 	var what []string
-	for _, src := range st.Sources {
+	for _, src := range statement.SourcesOf(s.in.Library, r) {
 		if src.Checked == string(material.Memory) || src.Checked == "not stated" {
 			what = append(what, src.ID+": "+src.Checked)
 		}

@@ -1,7 +1,8 @@
 package site
 
 import (
-	"ohmfolio/generator/figure"
+	"sync"
+
 	"ohmfolio/generator/material"
 	"ohmfolio/generator/output"
 	"ohmfolio/generator/statement"
@@ -19,51 +20,60 @@ type materialPage struct {
 	Cautions    cautionList
 }
 
-func (s *site) material(st *statement.Statement) output.Output {
-	id := st.Record.ID
-	return s.page("material/"+id+".html", "material-page", func() any {
-		p := s.materialPage(st, "material", "../material/")
-		p.frame = s.frame(st.Record.Name, "material", "../", "materials.html")
-		p.Contents = materialContents(st)
-		return p
-	})
+// pair is the statement that a page and its sheet share: computed by the one
+// that is rendered first, forgotten after the second.
+type pair struct {
+	mu   sync.Mutex
+	st   *statement.Statement
+	left int
 }
 
-func (s *site) sheet(st *statement.Statement) output.Output {
-	id := st.Record.ID
-	return s.page("sheet/"+id+".html", "sheet-page", func() any {
-		p := s.materialPage(st, "sheet", "../material/")
-		p.frame = s.frame("Sheet "+st.DocumentNumber+", "+st.Record.Name, "sheet-page", "../", "")
+func (p *pair) take(compute func() *statement.Statement) *statement.Statement {
+	p.mu.Lock()
+	defer p.mu.Unlock()
+	st := p.st
+	if st == nil {
+		st = compute()
+		p.st, p.left = st, 2
+	}
+	if p.left--; p.left == 0 {
+		p.st = nil
+	}
+	return st
+}
+
+func (s *site) materialPair(r *material.Record) (page, sheet output.Output) {
+	shared := &pair{}
+	compute := func() *statement.Statement { return s.in.Statement(r) }
+	page = s.page("material/"+r.ID+".html", "material-page", func() any {
+		p := s.materialPage(shared.take(compute))
+		p.frame = s.frame(r.Name, "material", "../", "materials.html")
+		p.Contents = materialContents(p.S)
+		return p
+	})
+	sheet = s.page("sheet/"+r.ID+".html", "sheet-page", func() any {
+		p := s.materialPage(shared.take(compute))
+		p.frame = s.frame("Sheet "+p.S.DocumentNumber+", "+r.Name, "sheet-page", "../", "")
 		p.Cautions = cautionList{"cautions", study.SheetCautions()}
 		return p
 	})
+	return page, sheet
 }
 
-// materialPage copies the statement: pages and sheets print figures with ids
-// of their own, and the documents that use the material are known here.
-func (s *site) materialPage(st *statement.Statement, prefix, to string) *materialPage {
+// materialPage copies the statement: the documents that use the material are
+// known here and not there.
+func (s *site) materialPage(st *statement.Statement) *materialPage {
 	own := *st
 	own.UsedBy = s.used[st.Record.ID]
-	own.RhoFigure, own.RatioFigure = withID(st.RhoFigure, prefix+"-rho"), withID(st.RatioFigure, prefix+"-ratio")
 	p := &materialPage{S: &own, StateClass: stateClass(st.Record)}
 	if r := st.Record.ReplacedBy; r != "" {
-		l := s.materialLink(r, "")
-		l.Path = to + r + ".html"
+		l := s.materialLink(r, "../")
 		p.Replacement = &l
 	}
 	if own.Set != nil && own.Set.Rho != nil && own.Set.Rho.Limits != nil {
 		p.BandWords = ", with the band of the stated limits"
 	}
 	return p
-}
-
-func withID(f *figure.Figure, id string) *figure.Figure {
-	if f == nil {
-		return nil
-	}
-	c := *f
-	c.ID = id
-	return &c
 }
 
 func stateClass(r *material.Record) string {

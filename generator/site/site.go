@@ -8,6 +8,7 @@ import (
 	"io/fs"
 
 	"ohmfolio/generator/library"
+	"ohmfolio/generator/material"
 	"ohmfolio/generator/output"
 	"ohmfolio/generator/place"
 	"ohmfolio/generator/statement"
@@ -16,11 +17,11 @@ import (
 
 // Input is all that the pages are made of.
 type Input struct {
-	Library    *library.Library
-	Statements []*statement.Statement      // sorted by ID
-	Outcomes   map[string][]*study.Outcome // by document, "reports/x", in order of blocks
-	Findings   []place.Finding
-	Theme      fs.FS // templates, styles and scripts
+	Library   *library.Library
+	Statement func(r *material.Record) *statement.Statement // computed when asked for, and forgotten
+	Outcomes  map[string][]*study.Outcome                   // by document, "reports/x", in order of blocks
+	Findings  []place.Finding
+	Theme     fs.FS // templates, styles and scripts
 	// Answer gives the current value of a live number: text, note, and
 	// whether there is one.
 	Answer func(question, written, materialID string) (text, note string, ok bool)
@@ -29,19 +30,17 @@ type Input struct {
 // Outputs lists every page, style and script. The error names the template
 // that cannot be used.
 func Outputs(in *Input) ([]output.Output, error) {
-	s := &site{in: in, byID: map[string]*statement.Statement{}}
-	for _, st := range in.Statements {
-		s.byID[st.Record.ID] = st
-	}
+	s := &site{in: in, units: statement.UnitsOf(in.Library)}
 	var err error
-	if s.look, err = loadLook(in.Theme, listScript(in)); err != nil {
+	if s.look, err = loadLook(in.Theme, s.listScript()); err != nil {
 		return nil, err
 	}
 	s.used = usedBy(in)
 	list := s.look.outputs()
 	list = append(list, s.home(), s.materials(), s.sideBySide(), s.sources(), s.words(), s.decisions(), s.review())
-	for _, st := range in.Statements {
-		list = append(list, s.material(st), s.sheet(st))
+	for _, r := range in.Library.Materials {
+		page, sheet := s.materialPair(r)
+		list = append(list, page, sheet)
 	}
 	for _, d := range in.Library.Documents {
 		if d.Room != "" {
@@ -53,10 +52,10 @@ func Outputs(in *Input) ([]output.Output, error) {
 
 // site is one run.
 type site struct {
-	in   *Input
-	look *look
-	byID map[string]*statement.Statement
-	used map[string][]statement.Use
+	in    *Input
+	look  *look
+	units statement.Units
+	used  map[string][]statement.Use
 }
 
 // frame is what every page's frame prints; page structs embed it.
@@ -144,8 +143,8 @@ func (s *site) pages(room string) []link {
 }
 
 func (s *site) materialLink(id, root string) link {
-	if st := s.byID[id]; st != nil {
-		return link{st.Record.Name, root + "material/" + id + ".html"}
+	if r := s.in.Library.Material(id); r != nil {
+		return link{r.Name, root + "material/" + r.ID + ".html"}
 	}
 	return link{id, ""}
 }

@@ -57,8 +57,8 @@ func (s *site) studyPart(w *bytes.Buffer, o *study.Outcome, d *library.Document,
 }
 
 func (s *site) short(id string) string {
-	if st := s.byID[id]; st != nil {
-		return st.Record.ShortName()
+	if r := s.in.Library.Material(id); r != nil {
+		return r.ShortName()
 	}
 	return id
 }

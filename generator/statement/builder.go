@@ -17,9 +17,9 @@ type builder struct {
 	s   *Statement
 }
 
-// unitsOf finds the house units of reference.yaml, which the library has
+// UnitsOf finds the house units of reference.yaml, which the library has
 // checked already.
-func unitsOf(lib *library.Library) Units {
+func UnitsOf(lib *library.Library) Units {
 	find := func(k quantity.Kind, name, usual string) quantity.Unit {
 		if u, ok := quantity.FindUnit(k, name); ok {
 			return u

@@ -46,7 +46,7 @@ func unitList(k quantity.Kind) string {
 
 // houseUnit is the unit that reference.yaml chose for a kind.
 func houseUnit(lib *library.Library, k quantity.Kind) quantity.Unit {
-	u := unitsOf(lib)
+	u := UnitsOf(lib)
 	switch k {
 	case quantity.Resistivity:
 		return u.Resistivity

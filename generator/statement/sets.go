@@ -125,37 +125,39 @@ func Greatest(f func(float64) float64, lo, hi float64) (at, value float64) {
 	return at, value
 }
 
-// sources lists the cited sources in order of first use.
-func (b *builder) sources() {
+// SourcesOf lists the sources that a record cites, in order of first use.
+func SourcesOf(lib *library.Library, r *material.Record) []SourceRow {
+	var rows []SourceRow
 	seen := map[string]bool{}
 	add := func(c material.Citation) {
 		if c.ID == "" || seen[c.ID] {
 			return
 		}
 		seen[c.ID] = true
-		row := SourceRow{Number: len(b.s.Sources) + 1, ID: c.ID, Text: "not in sources.yaml", Checked: orNotStated(string(b.lib.CheckedOf(c)))}
-		if src := b.lib.Source(c.ID); src != nil {
+		row := SourceRow{Number: len(rows) + 1, ID: c.ID, Text: "not in sources.yaml", Checked: orNotStated(string(lib.CheckedOf(c)))}
+		if src := lib.Source(c.ID); src != nil {
 			row.Text = SourceText(src)
 		}
-		b.s.Sources = append(b.s.Sources, row)
+		rows = append(rows, row)
 	}
-	if b.set != nil {
-		add(b.set.Source)
+	if r.Adopted != nil {
+		add(r.Adopted.Source)
 	}
-	for _, set := range b.r.Sets {
+	for _, set := range r.Sets {
 		add(set.Source)
 	}
-	for _, p := range b.r.Properties {
+	for _, p := range r.Properties {
 		add(p.Source)
 	}
-	for _, l := range b.r.TCRLimits {
+	for _, l := range r.TCRLimits {
 		add(l.Source)
 	}
-	for _, s := range b.r.Stock {
+	for _, s := range r.Stock {
 		if s.Source != nil {
 			add(*s.Source)
 		}
 	}
+	return rows
 }
 
 // SourceText is one line: author, title, number, publisher, edition, year.

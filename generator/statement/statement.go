@@ -96,7 +96,7 @@ type Use struct{ Title, Path, What string } // Path relative to the site's root
 // Of computes the statement of r. It never fails: what cannot be told is
 // said in words.
 func Of(lib *library.Library, r *material.Record) *Statement {
-	s := &Statement{Record: r, Set: r.Adopted, Units: unitsOf(lib)}
+	s := &Statement{Record: r, Set: r.Adopted, Units: UnitsOf(lib)}
 	b := builder{lib: lib, r: r, set: r.Adopted, s: s}
 	b.identity()
 	b.headline()
@@ -104,6 +104,6 @@ func Of(lib *library.Library, r *material.Record) *Statement {
 	b.properties()
 	b.dataSets()
 	b.figures()
-	b.sources()
+	s.Sources = SourcesOf(lib, r)
 	return s
 }
