@@ -77,9 +77,13 @@ func chartFigure(c study.Chart, id string) *figure.Figure {
 	f := &figure.Figure{ID: id, Title: c.Title, Description: c.Description, XTitle: c.XTitle, YTitle: c.YTitle, Width: 720, Height: 400}
 	for i, s := range c.Series {
 		ink, dash := i%4+1, (i+i/4)%4+1
-		f.Lines = append(f.Lines, figure.Line{Label: s.Label, X: s.X, Y: s.Y, Ink: ink, Dash: dash})
+		bandLabel := s.Label
+		if len(s.Y) > 0 {
+			bandLabel = ""
+			f.Lines = append(f.Lines, figure.Line{Label: s.Label, X: s.X, Y: s.Y, Ink: ink, Dash: dash})
+		}
 		if len(s.Lower) > 0 {
-			f.Areas = append(f.Areas, figure.Area{X: s.X, Lower: s.Lower, Upper: s.Upper, Ink: ink})
+			f.Areas = append(f.Areas, figure.Area{Label: bandLabel, X: s.X, Lower: s.Lower, Upper: s.Upper, Ink: ink})
 		}
 	}
 	return f

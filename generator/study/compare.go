@@ -141,7 +141,7 @@ func (c *comparison) measure(m *MaterialOutcome, set *material.DataSet) {
 		return
 	}
 	c.resistivity(m, set)
-	if !set.Ratio.HasNominal() {
+	if set.Ratio == nil || (!set.Ratio.HasNominal() && set.Ratio.Limits == nil) {
 		m.Reasons = append(m.Reasons, "cannot be told: no coefficient")
 		return
 	}
@@ -157,6 +157,11 @@ func (c *comparison) measure(m *MaterialOutcome, set *material.DataSet) {
 	if lo > c.lo+material.Slack || hi < c.hi-material.Slack {
 		m.Partly = windowText(lo, hi)
 		m.Reasons = append(m.Reasons, "data cover only "+m.Partly+" of the window")
+	}
+	if !set.Ratio.HasNominal() {
+		m.Reasons = append(m.Reasons, "limits only, no nominal: the worst case is told, and nothing is ranked")
+		c.worstCase(m, set, lo, hi)
+		return
 	}
 	measures, err := curve.Measure(set.Ratio.Nominal, c.reference, lo, hi)
 	if err != nil {
@@ -226,8 +231,24 @@ func (c *comparison) worstCase(m *MaterialOutcome, set *material.DataSet, lo, hi
 		greatest.add(t.Change.Max * 1e6)
 		box.add(t.Box * 1e6)
 	}
-	greatest.into(m.Numbers, rankChange)
-	box.into(m.Numbers, rankBox)
+	greatest.sure, box.sure = c.sureChange(set, lo, hi), 0
+	greatest.into(m.Numbers, rankChange, "ppm", quantity.ChangeText(greatest.lo*1e-6)+" to "+quantity.ChangeText(greatest.hi*1e-6))
+	box.into(m.Numbers, rankBox, "ppm/K", "at most "+quantity.PPMText(box.hi*1e-6))
+}
+
+// sureChange is the change in ppm that every curve within the limits reaches
+// at one end of the window: where both limits lie on the same side of zero,
+// the one nearer to it.
+func (c *comparison) sureChange(set *material.DataSet, lo, hi float64) float64 {
+	read := material.Reading{Told: set.Ratio, Ratio: true, Reference: c.reference}
+	sure := 0.0
+	for _, t := range []float64{lo, hi} {
+		l, ok := read.Limits(t)
+		if ok && (l.Lower-1)*(l.Upper-1) > 0 {
+			sure = math.Max(sure, math.Min(math.Abs(l.Lower-1), math.Abs(l.Upper-1))*1e6)
+		}
+	}
+	return sure
 }
 
 // order sorts the materials: whole windows before parts, then by the number

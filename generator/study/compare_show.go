@@ -86,8 +86,10 @@ func (c *comparison) cell(m MaterialOutcome, name string) string {
 	switch {
 	case name == rankRho:
 		return "no resistivity"
-	case m.Record.Adopted == nil || !m.Record.Adopted.Ratio.HasNominal():
+	case m.Record.Adopted == nil || m.Record.Adopted.Ratio == nil:
 		return "no coefficient"
+	case !m.Record.Adopted.Ratio.HasNominal():
+		return "no nominal"
 	case name == "chord_cold" || name == "chord_hot":
 		return "none on this side"
 	}
@@ -146,18 +148,22 @@ func (c *comparison) series(m MaterialOutcome) (Series, bool) {
 	for i := 0; i < seriesPoints; i++ {
 		t := lo + float64((hi-lo)*float64(i)/(seriesPoints-1))
 		v, ok := read.At(min(t, hi))
-		if !ok {
+		l, limited := read.Limits(min(t, hi))
+		if !ok && !limited {
 			continue
 		}
-		s.X, s.Y = append(s.X, t-quantity.ZeroCelsius), append(s.Y, convert(v))
-		if l, ok := read.Limits(min(t, hi)); ok {
+		s.X = append(s.X, t-quantity.ZeroCelsius)
+		if ok {
+			s.Y = append(s.Y, convert(v))
+		}
+		if limited {
 			s.Lower, s.Upper = append(s.Lower, convert(l.Lower)), append(s.Upper, convert(l.Upper))
 		}
 	}
 	if len(s.Lower) != len(s.X) {
 		s.Lower, s.Upper = nil, nil
 	}
-	return s, len(s.X) > 1
+	return s, len(s.X) > 1 && (len(s.Y) == len(s.X) || s.Lower != nil)
 }
 
 func (c *comparison) conversion() func(float64) float64 {

@@ -91,6 +91,8 @@ type Number struct {
 	Upper *float64 `json:"upper"`
 	Kind  string   `json:"kind"` // "limits", "uncertainty", "nominal"
 	Text  string   `json:"-"`    // as pages print it
+
+	sure float64 // magnitude that every curve within the limits reaches somewhere
 }
 
 // Evidence names the record a result rests on.
@@ -113,7 +115,7 @@ type Chart struct {
 // Series is one curve of a chart, with its band when there is one.
 type Series struct {
 	Label        string
-	X, Y         []float64
+	X, Y         []float64 // no Y when there is a band and no nominal
 	Lower, Upper []float64 // nil when there is no band
 }
 

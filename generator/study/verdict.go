@@ -50,25 +50,37 @@ func (c *comparison) require(m *MaterialOutcome) {
 }
 
 // judgeMagnitude holds |n| against a bound. margin = (limit − worst)/limit.
+// A number fails for certain when even the best case is beyond the bound.
 func judgeMagnitude(b bound, n Number) Requirement {
 	r := Requirement{Name: b.name, Limit: b.limit, Verdict: CannotBeTold}
-	if n.Value == nil {
+	worst, best, ok := magnitudes(n)
+	if !ok {
 		return r
-	}
-	worst, best := math.Abs(*n.Value), math.Abs(*n.Value)
-	if n.Lower != nil && n.Upper != nil {
-		worst = math.Max(math.Abs(*n.Lower), math.Abs(*n.Upper))
 	}
 	r.Worst, r.Margin = number(worst), number((b.limit-worst)/b.limit)
 	switch {
-	case n.Kind == "nominal" && worst <= b.limit:
-		r.Verdict = HoldsNominally
-	case worst <= b.limit:
-		r.Verdict = Holds
-	case best > b.limit && n.Kind == "nominal":
+	case best > b.limit:
 		r.Verdict = Fails
+	case worst > b.limit:
+	case n.Kind == "nominal":
+		r.Verdict = HoldsNominally
+	default:
+		r.Verdict = Holds
 	}
 	return r
+}
+
+// magnitudes are the largest |n| that the limits allow, and the one that no
+// curve within the limits stays under.
+func magnitudes(n Number) (worst, best float64, ok bool) {
+	if n.Value != nil {
+		worst, best, ok = math.Abs(*n.Value), math.Abs(*n.Value), true
+	}
+	if n.Lower != nil && n.Upper != nil {
+		worst, ok = math.Max(math.Abs(*n.Lower), math.Abs(*n.Upper)), true
+		best = n.sure
+	}
+	return worst, best, ok
 }
 
 // severity orders verdicts from best to worst.
