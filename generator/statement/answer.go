@@ -75,9 +75,10 @@ type Answer struct {
 	Band   string `json:"-"` // limits or uncertainty as text, "" when unknown
 }
 
-// Ask answers q of the record r. The error says in words why there is no
-// number; the answer that comes with it tells range, basis and source all the
-// same, its Value being nil.
+// Ask answers q of the record r. A source that states limits without a
+// nominal gives an answer whose Value is nil and whose Limits are there. The
+// error says in words why there is nothing to tell; the answer that comes with
+// it tells range, basis and source all the same.
 func Ask(lib *library.Library, r *material.Record, q Question) (Answer, error) {
 	set := r.Set(q.Set)
 	if set == nil {
@@ -102,8 +103,8 @@ func Ask(lib *library.Library, r *material.Record, q Question) (Answer, error) {
 	fill(&a, set, told, q, unit)
 	if a.Value == nil {
 		if a.Limits != nil {
-			return a, fmt.Errorf("%s, data set %s, states limits without a nominal value: between %s and %s", r.ID, set.Name,
-				unit.Format(unit.ToSI(a.Limits.Lower), 4), unit.Format(unit.ToSI(a.Limits.Upper), 4))
+			a.Text = "no nominal value"
+			return a, nil
 		}
 		return a, fmt.Errorf("%s, data set %s, cannot tell %s at %s", r.ID, set.Name, q.Quantity, quantity.CelsiusText(q.At))
 	}

@@ -73,6 +73,9 @@ func askAt(lib *library.Library, r *material.Record, asked, at, from, written st
 	if err != nil {
 		return InWords{}, err
 	}
+	if a.Value == nil {
+		return InWords{}, fmt.Errorf("the record states limits without a nominal value")
+	}
 	unit, err := unitFor(lib, q)
 	if err != nil {
 		return InWords{}, err
