@@ -102,10 +102,11 @@ func (s *session) printAnswer(a statement.Answer) {
 		at += " over its value at " + quantity.CelsiusText(*a.ReferenceC+quantity.ZeroCelsius)
 	}
 	line("what", a.Quantity+" of "+a.Material+" at "+at)
-	line("limits", a.Band)
-	if a.Band == "" {
-		line("limits", "not stated")
+	band := strings.TrimPrefix(a.Band, "limits ")
+	if band == "" {
+		band = "not stated"
 	}
+	line("limits", band)
 	line("valid range", quantity.CelsiusText(a.ValidRangeC[0]+quantity.ZeroCelsius)+" to "+quantity.CelsiusText(a.ValidRangeC[1]+quantity.ZeroCelsius))
 	line("data", fmt.Sprintf("%s, basis %s, class %s, condition %s", a.Data, a.Basis, a.Class, a.Condition))
 	line("source", a.Source+", checked against: "+a.Checked)
