@@ -16,7 +16,7 @@ const unit = 10
 const (
 	textHeight  = 15
 	tickWidth   = 7.2 // of a digit
-	labelWidth  = 7.4 // of an average letter
+	labelWidth  = 8.3 // of an average letter
 	marginTop   = 30
 	marginRight = 16
 	marginFoot  = 42

@@ -34,8 +34,9 @@ type Statement struct {
 	Sources        []SourceRow // the sources cited, in order of first use
 	UsedBy         []Use       // filled by the site, which knows the documents
 
-	RhoFigure   *figure.Figure // nil when ρ cannot be told
-	RatioFigure *figure.Figure // nil when R/R_ref cannot be told
+	RhoFigure       *figure.Figure // nil when ρ cannot be told
+	RatioFigure     *figure.Figure // nil when R/R_ref cannot be told
+	DeviationFigure *figure.Figure // nil when there is no other curve
 }
 
 // Units are the house units chosen in reference.yaml.
