@@ -21,8 +21,6 @@ var Kinds = []place.Kind{
 		head+"name: X\nname: Y\nsource: standard\nresistivity: 43 µΩ·cm\nreference_temperature: 20 °C\n", "keep one of the two"),
 	kind("key-unknown", "A key is not known", "Usually a typo: an unknown key would be left out in silence, and its value with it.",
 		head+"name: X\nresistvity: 43 µΩ·cm\nsource: standard\nreference_temperature: 20 °C\n", "write the key as the guide does"),
-	kind("nested-too-deep", "The nesting is too deep", "No shape needs more than six levels.",
-		head+"name: [[[[[[[[[[[[[[[[x]]]]]]]]]]]]]]]]\n", "look for a bracket that is not closed"),
 	kind("type-wrong", "A value of the wrong type", "A list where a text is needed, or the like.",
 		head+"name: [X, Y]\nsource: standard\nresistivity: 43 µΩ·cm\nreference_temperature: 20 °C\n", "write what the message names"),
 	kind("value-missing", "A key without a value", "An empty value says nothing; unknown things are left out and told as not stated.",

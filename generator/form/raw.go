@@ -15,11 +15,8 @@ import (
 	"ohmfolio/generator/place"
 )
 
-// Limits of what is read, stated in one place.
-const (
-	MaxBytes = 4 << 20 // of a YAML or Markdown file
-	maxDepth = 12      // of nesting; the deepest shape needs 6
-)
+// MaxBytes is the most that a YAML or Markdown file may have.
+const MaxBytes = 4 << 20
 
 // reader reads one source.
 type reader struct {

@@ -26,28 +26,24 @@ func ReadAs(src *place.Source, t Type) (*Node, []place.Finding) {
 	if root == nil {
 		return nil, r.list.Findings
 	}
-	n := r.value(root, t, 0)
+	n := r.value(root, t)
 	return n, r.list.Findings
 }
 
 // value checks y against t; nil after a finding that leaves nothing usable.
-func (r *reader) value(y *yaml.Node, t Type, depth int) *Node {
-	if depth > maxDepth {
-		r.add("nested-too-deep", r.at(y), "the nesting is too deep", fmt.Sprintf("keep it under %d levels", maxDepth))
-		return nil
-	}
+func (r *reader) value(y *yaml.Node, t Type) *Node {
 	if !r.plain(y) {
 		return nil
 	}
 	switch t.what {
 	case isEither:
-		return r.either(y, t, depth)
+		return r.either(y, t)
 	case isMapping:
-		return r.mapping(y, t.shape, depth)
+		return r.mapping(y, t.shape)
 	case isNamed:
-		return r.named(y, *t.of, depth)
+		return r.named(y, *t.of)
 	case isList:
-		return r.sequence(y, *t.of, depth)
+		return r.sequence(y, *t.of)
 	case isRows:
 		return r.numberRows(y)
 	}
@@ -69,10 +65,10 @@ func (r *reader) plain(y *yaml.Node) bool {
 	return false
 }
 
-func (r *reader) either(y *yaml.Node, t Type, depth int) *Node {
+func (r *reader) either(y *yaml.Node, t Type) *Node {
 	for _, a := range t.any {
 		if fits(y, a) {
-			return r.value(y, a, depth)
+			return r.value(y, a)
 		}
 	}
 	r.wrongType(y, t)
@@ -142,7 +138,7 @@ func (t Type) describe() string {
 }
 
 // mapping reads a mapping with known keys.
-func (r *reader) mapping(y *yaml.Node, s *Shape, depth int) *Node {
+func (r *reader) mapping(y *yaml.Node, s *Shape) *Node {
 	if y.Kind != yaml.MappingNode {
 		r.wrongType(y, Mapping(s))
 		return nil
@@ -155,7 +151,7 @@ func (r *reader) mapping(y *yaml.Node, s *Shape, depth int) *Node {
 			return Type{}, false
 		}
 		return f.Is, true
-	}, depth)
+	})
 	for _, f := range s.Fields {
 		if f.Required && !hasKey(y, f.Key) {
 			r.add("key-missing", n.Position(), s.Name+" needs the key "+f.Key, "add "+f.Key+": "+f.Example)
@@ -182,18 +178,18 @@ func (r *reader) unknownKey(key *yaml.Node, s *Shape) {
 }
 
 // named reads a mapping with free keys.
-func (r *reader) named(y *yaml.Node, of Type, depth int) *Node {
+func (r *reader) named(y *yaml.Node, of Type) *Node {
 	if y.Kind != yaml.MappingNode {
 		r.wrongType(y, Named(of))
 		return nil
 	}
 	n := r.node(y, isNamed)
-	r.pairs(y, n, func(*yaml.Node) (Type, bool) { return of, true }, depth)
+	r.pairs(y, n, func(*yaml.Node) (Type, bool) { return of, true })
 	return n
 }
 
 // pairs reads the keys and values of a mapping; typeOf says what a key holds.
-func (r *reader) pairs(y *yaml.Node, n *Node, typeOf func(key *yaml.Node) (Type, bool), depth int) {
+func (r *reader) pairs(y *yaml.Node, n *Node, typeOf func(key *yaml.Node) (Type, bool)) {
 	for i := 0; i+1 < len(y.Content); i += 2 {
 		key, value := y.Content[i], y.Content[i+1]
 		if !r.key(y, i) || r.splitNumber(y, i) {
@@ -206,7 +202,7 @@ func (r *reader) pairs(y *yaml.Node, n *Node, typeOf func(key *yaml.Node) (Type,
 		if !ok {
 			continue
 		}
-		v := r.value(value, t, depth+1)
+		v := r.value(value, t)
 		if v == nil {
 			continue
 		}
@@ -259,14 +255,14 @@ func (r *reader) repeated(n *Node, key *yaml.Node) bool {
 	return true
 }
 
-func (r *reader) sequence(y *yaml.Node, of Type, depth int) *Node {
+func (r *reader) sequence(y *yaml.Node, of Type) *Node {
 	if y.Kind != yaml.SequenceNode {
 		r.wrongType(y, List(of))
 		return nil
 	}
 	n := r.node(y, isList)
 	for _, e := range y.Content {
-		if v := r.value(e, of, depth+1); v != nil {
+		if v := r.value(e, of); v != nil {
 			n.items = append(n.items, v)
 		}
 	}
