@@ -1,7 +1,6 @@
 package form
 
 import (
-	"fmt"
 	"math"
 	"strconv"
 	"strings"
