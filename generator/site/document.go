@@ -142,7 +142,7 @@ func usedBy(in *Input) map[string][]statement.Use {
 			for _, m := range o.Materials {
 				what := "compared"
 				if m.Verdict != study.NotAsked {
-					what = string(m.Verdict)
+					what = m.Verdict.Shown()
 				}
 				add(m.Material, what)
 			}

@@ -139,7 +139,7 @@ func (s *site) decisionRows() []decisionRow {
 
 func (s *site) decisionRow(d *library.Document, o *study.Outcome, m study.MaterialOutcome, r study.Requirement) decisionRow {
 	row := decisionRow{Title: o.Title, Path: pagePath(d), Material: m.Material, Name: s.short(m.Material), Requirement: requirementText(r),
-		Verdict: string(r.Verdict), Margin: "cannot be told", Binding: o.Binding, margin: -1e9}
+		Verdict: r.Verdict.Shown(), Margin: "cannot be told", Binding: o.Binding, margin: -1e9}
 	if r.Margin != nil {
 		row.Margin, row.margin = quantity.Fixed(*r.Margin*100, 1)+quantity.NarrowSpace+"%", *r.Margin
 	}

@@ -42,7 +42,7 @@ func (s *site) studyPart(w *bytes.Buffer, o *study.Outcome, d *library.Document,
 	}
 	for _, m := range o.Materials {
 		for _, r := range m.Requirements {
-			p.Asked = append(p.Asked, s.short(m.Material)+": "+requirementText(r)+" "+string(r.Verdict))
+			p.Asked = append(p.Asked, s.short(m.Material)+": "+requirementText(r)+" "+r.Verdict.Shown())
 		}
 		for _, r := range append(m.Reasons, m.Warnings...) {
 			p.Reasons = append(p.Reasons, s.short(m.Material)+": "+r)

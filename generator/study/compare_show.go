@@ -74,7 +74,7 @@ func (c *comparison) row(m MaterialOutcome) []string {
 		row = append(row, c.cell(m, col.name))
 	}
 	if len(c.bounds()) > 0 {
-		row = append(row, string(m.Verdict))
+		row = append(row, m.Verdict.Shown())
 	}
 	return row
 }

@@ -38,6 +38,14 @@ const (
 	NotAsked       Verdict = "" // nothing was required
 )
 
+// Shown is the verdict as pages print it: one that fails must not be missed.
+func (v Verdict) Shown() string {
+	if v == Fails {
+		return "FAILS"
+	}
+	return string(v)
+}
+
 // Outcome is the whole result of one study. Its JSON form is a contract.
 type Outcome struct {
 	Study      string            `json:"study"`
