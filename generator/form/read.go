@@ -191,7 +191,11 @@ func (r *reader) named(y *yaml.Node, of Type) *Node {
 func (r *reader) pairs(y *yaml.Node, n *Node, typeOf func(key *yaml.Node) (Type, bool)) {
 	for i := 0; i+1 < len(y.Content); i += 2 {
 		key, value := y.Content[i], y.Content[i+1]
-		if !r.key(y, i) || r.splitNumber(y, i) {
+		if !r.key(y, i) {
+			continue
+		}
+		if r.splitNumber(y, i+2) {
+			i += 2
 			continue
 		}
 		if r.repeated(n, key) {
@@ -227,10 +231,13 @@ func (r *reader) key(y *yaml.Node, i int) bool {
 }
 
 // splitNumber finds {value: 8,4 g/cm³}, which YAML reads as two keys: the
-// second one has no value and begins with a digit.
+// second one, at i, has no value and begins with a digit.
 func (r *reader) splitNumber(y *yaml.Node, i int) bool {
+	if i+1 >= len(y.Content) {
+		return false
+	}
 	key, value := y.Content[i], y.Content[i+1]
-	if i == 0 || y.Style&yaml.FlowStyle == 0 || value.Value != "" || value.Tag != "!!null" || key.Value == "" {
+	if y.Style&yaml.FlowStyle == 0 || value.Value != "" || value.Tag != "!!null" || key.Value == "" {
 		return false
 	}
 	before := y.Content[i-1].Value
