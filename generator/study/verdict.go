@@ -19,7 +19,7 @@ func (c *comparison) bounds() []bound {
 	node := c.in.Block.Get("require")
 	for _, name := range []string{rankChange, rankBox} {
 		if q, ok := node.Get(name).Quantity(); ok {
-			list = append(list, bound{name, float64(q.Value * 1e6)})
+			list = append(list, bound{name, quantity.Round12(q.Value * 1e6)})
 		}
 	}
 	return list
