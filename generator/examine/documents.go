@@ -143,6 +143,24 @@ var bindingOnDraft = Rule{
 	},
 }
 
+var withdrawnInUse = Rule{
+	Kind: place.Kind{
+		Code: "withdrawn-in-use", Severity: place.Warning, Title: "A study uses a withdrawn record",
+		Explanation: "The record was replaced or found wrong; what rests on it must be looked at again.",
+		Trigger:     copper("status: withdrawn\nwithdrawn_reason: replaced\n") + "-- content/reports/x.md --\n# X\n\n```study: compare\nmaterials: [x]\nwindow: 0 °C to 100 °C\n```\n",
+		Mend:        "use the record that replaces it, which its page names",
+	},
+	Whole: func(p *Pass) {
+		for _, j := range p.Outcomes {
+			for _, m := range j.Outcome.Materials {
+				if m.Record.Status == material.Withdrawn {
+					p.Find(j.Document.Source, j.Outcome.Position, quote(j.Outcome.Title)+" uses "+m.Material+", which is withdrawn: "+m.Record.WithdrawnReason, p.rule.Kind.Mend)
+				}
+			}
+		}
+	},
+}
+
 func orDraft(s material.Status) string {
 	if s == "" {
 		return string(material.Draft)

@@ -47,4 +47,5 @@ var rules = []Rule{
 	thermalConductivityUnlikely,
 	turningPointHidden,
 	uncertaintyWithoutK,
+	withdrawnInUse,
 }

@@ -166,7 +166,36 @@ func (l *loader) record(name string) *material.Record {
 	if place.Count(findings, place.Error) > 0 {
 		return nil
 	}
+	l.beside(r)
 	return r
+}
+
+// maxPoints is the most bytes that a file of measured points or lots may have.
+const maxPoints = 64 << 20
+
+// beside checks that the CSV files of a record stand beside it.
+func (l *loader) beside(r *material.Record) {
+	check := func(n *form.Node) {
+		if n == nil {
+			return
+		}
+		list := place.List{Source: r.Source}
+		name := n.Text()
+		info, err := fs.Stat(l.fsys, path.Join("materials", name))
+		switch {
+		case path.Base(name) != name || !strings.HasSuffix(name, ".csv"):
+			list.Add("file-beside-missing", place.Error, n.Position(), "“"+name+"” is no CSV file beside the record", "write the name of a .csv file in materials/")
+		case err != nil:
+			list.Add("file-beside-missing", place.Error, n.Position(), "the file "+name+" is not there", "put it into materials/, beside the record")
+		case info.Size() > maxPoints:
+			list.Add("file-too-large", place.Error, n.Position(), "the file "+name+" is larger than 64 MiB", "split it, or average the readings")
+		}
+		l.findings = append(l.findings, list.Findings...)
+	}
+	check(r.Node.Get("lots"))
+	for _, s := range r.Sets {
+		check(s.Node.Get("points"))
+	}
 }
 
 // stem is a file's name without folder and ending.

@@ -206,6 +206,43 @@ func TestWireTables(t *testing.T) {
 	}
 }
 
+// TestCableTables: IEC 60228. The area of solid standard copper with the
+// printed resistance, and the factor that brings a reading to 20 °C: the copper
+// formula 254.5/(234.5 + t) within what rounding 234.45 to 234.5 does, the
+// printed common factor of the table within half a per cent.
+func TestCableTables(t *testing.T) {
+	lib := demo(t)
+	copper := lib.Material("copper-annealed").Adopted
+	rho, _ := material.Reading{Told: copper.Rho}.At(kelvin + 20)
+	compared := 0
+	for _, row := range rows(t, "iec60228_max_resistance_20C.csv") {
+		r, okR := number(row["class2_Cu_plain_ohm_per_km"])
+		want, okA := number(row["solid_IACS_area_that_would_give_class2_R_mm2"])
+		if okR && okA {
+			if got := rho / (r * 1e-3) * 1e6; math.Abs(got/want-1) > 3e-4 {
+				t.Errorf("%s mm²: area %g mm², published %g", row["nominal_area_mm2"], got, want)
+			}
+			compared++
+		}
+	}
+	for _, row := range rows(t, "iec60228_temperature_correction.csv") {
+		c, _ := number(row["t_C"])
+		formula, _ := number(row["kt_Cu_calc_254.5/(234.5+t)"])
+		printed, _ := number(row["kt_printed_S15"])
+		ratio, ok := material.Reading{Told: copper.Ratio}.At(kelvin + c)
+		if !ok {
+			continue
+		}
+		if math.Abs(1/ratio-formula) > 2e-4 || math.Abs(1/ratio-printed) > 5e-3 {
+			t.Errorf("kt at %g °C: %g, formula %g, printed %g", c, 1/ratio, formula, printed)
+		}
+		compared++
+	}
+	if compared < 15 {
+		t.Errorf("only %d values were compared", compared)
+	}
+}
+
 func rows(t *testing.T, file string) []map[string]string {
 	t.Helper()
 	f, err := os.Open("testdata/" + file)
