@@ -43,6 +43,20 @@ func examineAll(lib *library.Library, today string) ([]examine.Judged, []place.F
 	return outcomes, examine.Run(lib, outcomes, examine.Options{Today: today, Parallel: runtime.GOMAXPROCS(0), More: more})
 }
 
+// loadOne reads the reference and one record of it whose numbers may be
+// quoted.
+func (s *session) loadOne(id string) (*library.Library, *material.Record, error) {
+	lib, err := s.load()
+	if err != nil {
+		return nil, nil, err
+	}
+	r, err := s.record(lib, id)
+	if err != nil {
+		return nil, nil, err
+	}
+	return lib, r, s.usable(lib, r)
+}
+
 // record finds one material for value and tcr; they fail only on the records
 // that they use.
 func (s *session) record(lib *library.Library, id string) (*material.Record, error) {

@@ -48,15 +48,8 @@ func (s *session) runTCR(id, window, reference, data, format string) error {
 	if err != nil {
 		return err
 	}
-	lib, err := s.load()
+	lib, r, err := s.loadOne(id)
 	if err != nil {
-		return err
-	}
-	r, err := s.record(lib, id)
-	if err != nil {
-		return err
-	}
-	if err := s.usable(lib, r); err != nil {
 		return err
 	}
 	a, err := statement.TCR(lib, r, data, lo.Value, hi.Value, ref)

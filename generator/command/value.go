@@ -63,15 +63,8 @@ func (s *session) runValue(id, asked string, f valueFlags) error {
 	if err != nil {
 		return err
 	}
-	lib, err := s.load()
+	lib, r, err := s.loadOne(id)
 	if err != nil {
-		return err
-	}
-	r, err := s.record(lib, id)
-	if err != nil {
-		return err
-	}
-	if err := s.usable(lib, r); err != nil {
 		return err
 	}
 	a, err := statement.Ask(lib, r, statement.Question{Quantity: asked, At: at, Reference: reference, Set: f.data, Unit: f.unit, Extrapolate: f.extrapolate})

@@ -3,19 +3,21 @@ package curve
 import (
 	"math"
 	"testing"
+
+	"ohmfolio/generator/published"
 )
 
 // Source: J₅ by 64-point Gauss–Legendre panels, independently of this program (derived).
 func TestBlochGruneisenFunction(t *testing.T) {
-	for _, row := range rows(t, "bloch_gruneisen_n5_function.csv") {
-		x := number(t, row["T_over_Theta"])
+	for _, row := range published.Rows(t, "bloch_gruneisen_n5_function.csv") {
+		x := published.Number(t, row["T_over_Theta"])
 		m := BlochGruneisen{Theta: 300, Amplitude: 1, Exponent: 5}
-		want := number(t, row["J5_of_Theta_over_T"])
+		want := published.Number(t, row["J5_of_Theta_over_T"])
 		near(t, row["T_over_Theta"]+" J5", debyeIntegral(5, 1/x)/want, 1, 1e-9)
-		want = number(t, row["(T/Theta)^5*J5"])
+		want = published.Number(t, row["(T/Theta)^5*J5"])
 		near(t, row["T_over_Theta"]+" function", m.At(300*x)/want, 1, 1e-9)
 		printed := row["rho_i(T)/rho_i(Theta)"]
-		near(t, row["T_over_Theta"]+" reduced", m.At(300*x)/m.At(300)/number(t, printed), 1, 1e-6)
+		near(t, row["T_over_Theta"]+" reduced", m.At(300*x)/m.At(300)/published.Number(t, printed), 1, 1e-6)
 	}
 }
 

@@ -3,6 +3,8 @@ package curve
 import (
 	"math"
 	"testing"
+
+	"ohmfolio/generator/published"
 )
 
 // platinum has the coefficients of IEC 60751:2008 for industrial platinum
@@ -13,24 +15,24 @@ var platinum = CallendarVanDusen{A: 3.9083e-3, B: -5.775e-7, C: -4.183e-12}
 // row and three in some (transcriptions), four calculated.
 func TestPlatinumTableBothWays(t *testing.T) {
 	curve := must(t)(platinum.Curve(c(-200), c(850)))
-	table := rows(t, "iec60751_pt100.csv")
+	table := published.Rows(t, "iec60751_pt100.csv")
 	for _, row := range table {
-		kelvin := c(number(t, row["t_C"]))
+		kelvin := c(published.Number(t, row["t_C"]))
 		ohm := 100 * at(t, curve, kelvin)
 		for _, column := range []string{"R_ohm_calc_4_decimals", "R_ohm_printed_2_decimals_S18", "R_ohm_printed_3_decimals_S19"} {
 			if printed := row[column]; printed != "" {
-				near(t, row["t_C"]+" °C "+column, ohm, number(t, printed), halfUnit(printed)*1.001)
+				near(t, row["t_C"]+" °C "+column, ohm, published.Number(t, printed), halfUnit(printed)*1.001)
 			}
 		}
 		slope, _ := curve.Slope(kelvin)
-		near(t, row["t_C"]+" °C slope", 100*slope, number(t, row["dR_dt_ohm_per_C_calc"]), 5.1e-6)
+		near(t, row["t_C"]+" °C slope", 100*slope, published.Number(t, row["dR_dt_ohm_per_C_calc"]), 5.1e-6)
 
-		calculated := number(t, row["R_ohm_calc_4_decimals"]) // 0.05 mΩ is 0.17 mK at 850 °C, 0.12 mK at −200 °C
+		calculated := published.Number(t, row["R_ohm_calc_4_decimals"]) // 0.05 mΩ is 0.17 mK at 850 °C, 0.12 mK at −200 °C
 		back, ok := platinum.Temperature(calculated / 100)
 		if !ok {
 			t.Fatalf("%s: no temperature", row["t_C"])
 		}
-		near(t, row["t_C"]+" °C back from the table", back, kelvin, 0.5e-4/number(t, row["dR_dt_ohm_per_C_calc"])*1.01)
+		near(t, row["t_C"]+" °C back from the table", back, kelvin, 0.5e-4/published.Number(t, row["dR_dt_ohm_per_C_calc"])*1.01)
 	}
 	if len(table) < 70 {
 		t.Errorf("only %d rows were compared", len(table))

@@ -3,6 +3,8 @@ package curve
 import (
 	"math"
 	"testing"
+
+	"ohmfolio/generator/published"
 )
 
 // Source: NBS Circular 31 and Dellinger (1911): the resistance of a fixed piece
@@ -11,29 +13,29 @@ import (
 func TestVolumeAgainstConstantMass(t *testing.T) {
 	const gamma, copper = 17e-6, 100.0 / 58 // µΩ·cm: the standard's 1/58 Ω·mm²/m, printed as 1.7241
 	table := map[string]map[string]string{}
-	for _, row := range rows(t, "expansion_volume_vs_constant_mass.csv") {
+	for _, row := range published.Rows(t, "expansion_volume_vs_constant_mass.csv") {
 		table[row["quantity"]] = row
 	}
 	piece := Polynomial{Y0: copper, Alpha: 0.00393, Reference: c(20)}.Curve(c(0), c(150))
 	volume := must(t)(Resistivity(piece, gamma, c(20)))
 	slope, _ := volume.Slope(c(20))
 	row := table["copper: volume-resistivity change per C with expansion, 1.7241*(alpha_R+gamma)"]
-	near(t, "0.00681 µΩ·cm/°C, printed", slope, number(t, row["printed_value"]), 5e-6)
-	near(t, "recomputed", slope, number(t, row["recomputed"]), halfUnit(row["recomputed"]))
+	near(t, "0.00681 µΩ·cm/°C, printed", slope, published.Number(t, row["printed_value"]), 5e-6)
+	near(t, "recomputed", slope, published.Number(t, row["recomputed"]), halfUnit(row["recomputed"]))
 	wrong, _ := piece.Slope(c(20))
-	if math.Abs(wrong-number(t, row["printed_value"])) < 5e-6 {
+	if math.Abs(wrong-published.Number(t, row["printed_value"])) < 5e-6 {
 		t.Error("without expansion the printed value must not come out")
 	}
 	row = table["copper: volume-resistivity coefficient = alpha_R + gamma"]
-	near(t, "volume coefficient", slope/copper, number(t, row["printed_value"]), 5e-10)
+	near(t, "volume coefficient", slope/copper, published.Number(t, row["printed_value"]), 5e-10)
 
 	row = table["copper, 20 to 100 C, volume-resistivity ratio (1+alpha_R*80)*(1+gamma*80)"]
 	ratio, _ := Ratio(volume, c(20))
-	near(t, "ρ ratio at 100 °C", at(t, ratio, c(100)), number(t, row["recomputed"]), 5e-9)
+	near(t, "ρ ratio at 100 °C", at(t, ratio, c(100)), published.Number(t, row["recomputed"]), 5e-9)
 	row = table["copper, 20 to 100 C, R ratio of a fixed piece (1+alpha_R*80)"]
 	back := must(t)(Resistance(volume, gamma, c(20)))
 	ratio, _ = Ratio(back, c(20))
-	near(t, "R ratio at 100 °C", at(t, ratio, c(100)), number(t, row["recomputed"]), 1.4*1e-9)
+	near(t, "R ratio at 100 °C", at(t, ratio, c(100)), published.Number(t, row["recomputed"]), 1.4*1e-9)
 }
 
 // Source: Matula (1979), copper, 293 K 1.678 and 400 K 2.402 µΩ·cm, corrected

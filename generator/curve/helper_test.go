@@ -1,10 +1,7 @@
 package curve
 
 import (
-	"encoding/csv"
 	"math"
-	"os"
-	"strconv"
 	"testing"
 )
 
@@ -38,38 +35,6 @@ func must(t *testing.T) func(Curve, error) Curve {
 		}
 		return curve
 	}
-}
-
-// rows reads a table of testdata, each row by the names of its header.
-func rows(t *testing.T, file string) []map[string]string {
-	t.Helper()
-	f, err := os.Open("testdata/" + file)
-	if err != nil {
-		t.Fatal(err)
-	}
-	defer f.Close()
-	all, err := csv.NewReader(f).ReadAll()
-	if err != nil {
-		t.Fatal(err)
-	}
-	var out []map[string]string
-	for _, line := range all[1:] {
-		row := map[string]string{}
-		for i, cell := range line {
-			row[all[0][i]] = cell
-		}
-		out = append(out, row)
-	}
-	return out
-}
-
-func number(t *testing.T, text string) float64 {
-	t.Helper()
-	v, err := strconv.ParseFloat(text, 64)
-	if err != nil {
-		t.Fatal(err)
-	}
-	return v
 }
 
 // halfUnit is half a unit of the last digit printed in text.

@@ -3,29 +3,31 @@ package curve
 import (
 	"math"
 	"testing"
+
+	"ohmfolio/generator/published"
 )
 
 // Source: quadratic vectors computed independently in double precision (derived).
 func TestQuadraticVectors(t *testing.T) {
-	for _, row := range rows(t, "quadratic_vectors.csv") {
+	for _, row := range published.Rows(t, "quadratic_vectors.csv") {
 		id := row["id"]
-		p := Polynomial{Y0: 1, Alpha: number(t, row["alpha_1e-6/K"]) * 1e-6, Beta: number(t, row["beta_1e-6/K2"]) * 1e-6,
-			Reference: c(number(t, row["T0_C"]))}
-		q := p.Rereference(c(number(t, row["T1_C"])))
-		near(t, id+" ratio", q.Y0, number(t, row["R_T1_over_R_T0"]), 1e-12)
-		near(t, id+" α", q.Alpha*1e6, number(t, row["alpha_T1_1e-6/K"]), 2e-9)
-		near(t, id+" β", q.Beta*1e6, number(t, row["beta_T1_1e-6/K2"]), 2e-9)
+		p := Polynomial{Y0: 1, Alpha: published.Number(t, row["alpha_1e-6/K"]) * 1e-6, Beta: published.Number(t, row["beta_1e-6/K2"]) * 1e-6,
+			Reference: c(published.Number(t, row["T0_C"]))}
+		q := p.Rereference(c(published.Number(t, row["T1_C"])))
+		near(t, id+" ratio", q.Y0, published.Number(t, row["R_T1_over_R_T0"]), 1e-12)
+		near(t, id+" α", q.Alpha*1e6, published.Number(t, row["alpha_T1_1e-6/K"]), 2e-9)
+		near(t, id+" β", q.Beta*1e6, published.Number(t, row["beta_T1_1e-6/K2"]), 2e-9)
 		if row["peak_T_C"] == "" {
 			continue
 		}
-		peak := c(number(t, row["peak_T_C"]))
+		peak := c(published.Number(t, row["peak_T_C"]))
 		curve := p.Curve(peak-500, peak+500)
 		points := curve.TurningPoints()
 		if len(points) != 1 || points[0].Maximum != (p.Beta < 0) {
 			t.Fatalf("%s: turning points %v", id, points)
 		}
 		near(t, id+" peak at", points[0].T, peak, 1e-6)
-		near(t, id+" peak", at(t, curve, points[0].T), number(t, row["R_peak_over_R_T0"]), 1e-12)
+		near(t, id+" peak", at(t, curve, points[0].T), published.Number(t, row["R_peak_over_R_T0"]), 1e-12)
 	}
 }
 
@@ -33,18 +35,18 @@ func TestQuadraticVectors(t *testing.T) {
 // memory, reproduced by the handbook's formula. α at 20 °C is n·0.00393.
 func TestCopperAtOtherReferenceTemperatures(t *testing.T) {
 	entries := 0
-	for _, row := range rows(t, "nbs_copper_alpha_vs_conductivity.csv") {
-		alpha20 := number(t, row["percent_IACS"]) / 100 * 0.00393
+	for _, row := range published.Rows(t, "nbs_copper_alpha_vs_conductivity.csv") {
+		alpha20 := published.Number(t, row["percent_IACS"]) / 100 * 0.00393
 		p := Polynomial{Y0: 1, Alpha: alpha20, Reference: c(20)}
 		for _, ref := range []string{"0", "15", "20", "25", "30", "50"} {
-			got := p.Rereference(c(number(t, ref))).Alpha
+			got := p.Rereference(c(published.Number(t, ref))).Alpha
 			printed, calculated := row["alpha_"+ref+"C_printed_memory"], row["alpha_"+ref+"C_calc"]
-			near(t, row["percent_IACS"]+" % at "+ref+" °C, printed", got, number(t, printed), halfUnit(printed)*1.0001)
-			near(t, row["percent_IACS"]+" % at "+ref+" °C, calculated", got, number(t, calculated), halfUnit(calculated)*1.0001)
+			near(t, row["percent_IACS"]+" % at "+ref+" °C, printed", got, published.Number(t, printed), halfUnit(printed)*1.0001)
+			near(t, row["percent_IACS"]+" % at "+ref+" °C, calculated", got, published.Number(t, calculated), halfUnit(calculated)*1.0001)
 			entries++
 		}
 		zero := c(20) - 1/alpha20 // where the straight line is zero
-		near(t, row["percent_IACS"]+" % zero", -(zero - zeroCelsius), number(t, row["T_calc"]), 0.0006)
+		near(t, row["percent_IACS"]+" % zero", -(zero - zeroCelsius), published.Number(t, row["T_calc"]), 0.0006)
 	}
 	if entries < 30 {
 		t.Errorf("only %d entries were compared", entries)

@@ -9,11 +9,13 @@ import (
 	"testing"
 
 	"gonum.org/v1/gonum/interp"
+
+	"ohmfolio/generator/published"
 )
 
 func nodes(t *testing.T, file string) (x, y []float64) {
-	for _, row := range rows(t, file) {
-		x, y = append(x, number(t, row["x"])), append(y, number(t, row["y"]))
+	for _, row := range published.Rows(t, file) {
+		x, y = append(x, published.Number(t, row["x"])), append(y, published.Number(t, row["y"]))
 	}
 	return x, y
 }
@@ -49,13 +51,13 @@ func TestFritschButlandReferenceValues(t *testing.T) {
 		cubic := must(t)(Table(x, y, false))
 		linear := must(t)(Table(x, y, true))
 		for i, q := range set.Query {
-			want := number(t, set.Cubic.Values[i])
-			near(t, name+" cubic at "+q, at(t, cubic, number(t, q)), want, 4e-15*math.Max(1, math.Abs(want))) // the abscissae are rounded, the slopes up to 30
-			want = number(t, set.Linear.Values[i])
-			near(t, name+" linear at "+q, at(t, linear, number(t, q)), want, 4e-15*math.Max(1, math.Abs(want))) // the abscissae are rounded, the slopes up to 30
+			want := published.Number(t, set.Cubic.Values[i])
+			near(t, name+" cubic at "+q, at(t, cubic, published.Number(t, q)), want, 4e-15*math.Max(1, math.Abs(want))) // the abscissae are rounded, the slopes up to 30
+			want = published.Number(t, set.Linear.Values[i])
+			near(t, name+" linear at "+q, at(t, linear, published.Number(t, q)), want, 4e-15*math.Max(1, math.Abs(want))) // the abscissae are rounded, the slopes up to 30
 		}
 		for i, text := range set.Cubic.Slopes {
-			want := number(t, text)
+			want := published.Number(t, text)
 			got, _ := cubic.Slope(x[i])
 			near(t, name+" slope", got, want, 1e-13*math.Max(1e-2, math.Abs(want)))
 		}

@@ -1,7 +1,6 @@
 package material
 
 import (
-	"encoding/csv"
 	"math"
 	"os"
 	"path/filepath"
@@ -10,6 +9,7 @@ import (
 	"testing"
 
 	"ohmfolio/generator/place"
+	"ohmfolio/generator/published"
 )
 
 // demoRecord reads one record of the demo reference.
@@ -24,34 +24,6 @@ func demoRecord(t *testing.T, id string) *Record {
 		t.Fatalf("%s: %v", id, findings)
 	}
 	return r
-}
-
-// table reads a CSV of testdata as maps by column.
-func table(t *testing.T, file string) []map[string]string {
-	t.Helper()
-	f, err := os.Open(filepath.Join("testdata", file))
-	if err != nil {
-		t.Fatal(err)
-	}
-	defer f.Close()
-	rows, err := csv.NewReader(f).ReadAll()
-	if err != nil {
-		t.Fatal(err)
-	}
-	var list []map[string]string
-	for _, row := range rows[1:] {
-		m := map[string]string{}
-		for i, name := range rows[0] {
-			m[name] = row[i]
-		}
-		list = append(list, m)
-	}
-	return list
-}
-
-func number(s string) (float64, bool) {
-	x, err := strconv.ParseFloat(strings.TrimSpace(s), 64)
-	return x, err == nil
 }
 
 // TestPublishedResistivity: every row that was read in a published table is
@@ -69,9 +41,9 @@ func TestPublishedResistivity(t *testing.T) {
 		{"desai1984_aluminium.csv", "aluminium-pure", "T_K", "rho_CRC_1e-8_ohm_m", "provenance_CRC", 5},
 	} {
 		r, compared := demoRecord(t, c.id), 0
-		for _, row := range table(t, c.file) {
-			at, okT := number(row[c.temperature])
-			want, okV := number(row[c.value])
+		for _, row := range published.Rows(t, c.file) {
+			at, okT := published.Optional(row[c.temperature])
+			want, okV := published.Optional(row[c.value])
 			if !okT || !okV || !strings.HasPrefix(row[c.state], "SEEN") {
 				continue
 			}
@@ -105,14 +77,14 @@ func reproduced(r *Record, at, want float64) (found bool, nearest float64) {
 func TestWireTables(t *testing.T) {
 	ids := map[string]string{"Al": "aluminium-pure", "Pt": "platinum", "W": "tungsten", "Cu": "copper-pure", "Ag": "silver", "Au": "gold"}
 	compared := 0
-	for _, row := range table(t, "crc_wire_table_0_20_25_100C.csv") {
+	for _, row := range published.Rows(t, "crc_wire_table_0_20_25_100C.csv") {
 		id, ok := ids[row["metal"]]
 		if !ok {
 			continue
 		}
 		r := demoRecord(t, id)
 		for _, c := range []float64{0, 20, 25, 100} {
-			want, _ := number(row["rho_"+strconv.Itoa(int(c))+"C_1e-8_ohm_m"])
+			want, _ := published.Optional(row["rho_"+strconv.Itoa(int(c))+"C_1e-8_ohm_m"])
 			if found, got := reproduced(r, 273.15+c, want*1e-8); !found {
 				t.Errorf("%s at %g °C: published %g, the nearest %g", id, c, want, got*1e8)
 			}
@@ -128,7 +100,7 @@ func TestWireTables(t *testing.T) {
 func TestHeaterFactors(t *testing.T) {
 	ids := map[string]string{"Cr20Ni80 (NiCr8020)": "nicr8020", "Cr15Ni60 (NiCr6015)": "nicr6015", "0Cr25Al5": "fecral-25-5", "0Cr21Al4": "fecral-21-4", "Cr20Ni30": "nicr3020", "CuNi44": "cuni44"}
 	compared := 0
-	for _, row := range table(t, "ct_factors.csv") {
+	for _, row := range published.Rows(t, "ct_factors.csv") {
 		id, ok := ids[row["grade"]]
 		if !ok {
 			continue
@@ -136,11 +108,11 @@ func TestHeaterFactors(t *testing.T) {
 		set := demoRecord(t, id).Adopted
 		for column, text := range row {
 			c, isFactor := strings.CutPrefix(column, "Ct_")
-			want, there := number(text)
+			want, there := published.Optional(text)
 			if !isFactor || !there {
 				continue
 			}
-			celsius, _ := number(c)
+			celsius, _ := published.Optional(c)
 			got, ok := Reading{Told: set.Ratio, Ratio: true, Reference: 293.15}.At(273.15 + celsius)
 			if !ok || math.Abs(got-want) > 1e-12 {
 				t.Errorf("%s at %s °C: published %g, computed %g", id, c, want, got)
@@ -156,9 +128,9 @@ func TestHeaterFactors(t *testing.T) {
 // TestThermometer: IEC 60751, every row, to half a unit of the fourth decimal.
 func TestThermometer(t *testing.T) {
 	set := demoRecord(t, "platinum-thermometer").Adopted
-	for _, row := range table(t, "iec60751_pt100.csv") {
-		c, _ := number(row["t_C"])
-		want, _ := number(row["R_ohm_calc_4_decimals"])
+	for _, row := range published.Rows(t, "iec60751_pt100.csv") {
+		c, _ := published.Optional(row["t_C"])
+		want, _ := published.Optional(row["R_ohm_calc_4_decimals"])
 		got, ok := Reading{Told: set.Ratio}.At(273.15 + c)
 		if !ok || math.Abs(100*got-want) > 0.5001e-4 {
 			t.Errorf("at %g °C: %g Ω, computed %g", c, want, 100*got)
@@ -177,14 +149,14 @@ func TestCopperAtOtherTemperatures(t *testing.T) {
 		t.Fatal("copper-annealed is no polynomial")
 	}
 	compared := 0
-	for _, row := range table(t, "nbs_copper_alpha_vs_conductivity.csv") {
+	for _, row := range published.Rows(t, "nbs_copper_alpha_vs_conductivity.csv") {
 		if row["percent_IACS"] != "100" {
 			continue
 		}
 		for _, c := range []int{0, 15, 20, 25, 30, 50} {
 			name := "alpha_" + strconv.Itoa(c) + "C"
-			calc, _ := number(row[name+"_calc"])
-			printed, _ := number(row[name+"_printed_memory"])
+			calc, _ := published.Optional(row[name+"_calc"])
+			printed, _ := published.Optional(row[name+"_printed_memory"])
 			got := p.Rereference(273.15 + float64(c)).Alpha
 			if math.Abs(got-calc) > 5e-8 || math.Abs(got-printed) > 0.5001e-5 {
 				t.Errorf("α at %d °C: %g, recomputed %g, printed %g", c, got, calc, printed)

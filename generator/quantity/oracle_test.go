@@ -6,6 +6,8 @@ import (
 	"regexp"
 	"strings"
 	"testing"
+
+	"ohmfolio/generator/published"
 )
 
 // gnuWords are the words of GNU units for those of our ASCII spellings that it
@@ -46,7 +48,7 @@ func TestAgainstGNUUnits(t *testing.T) {
 				from = "1" + from
 			}
 			from = strings.Replace(from, "%", "0.01", 1)
-			if want := number(t, gnu(t, from, gnuSI[k])); !within(u.ToSI(1), want, 2e-14) {
+			if want := published.Number(t, gnu(t, from, gnuSI[k])); !within(u.ToSI(1), want, 2e-14) {
 				t.Errorf("%s: one %s is %v, GNU units says %v for %q", k, u.ASCII, u.ToSI(1), want, from)
 			}
 		}
@@ -66,7 +68,7 @@ func TestTemperaturesAgainstGNUUnits(t *testing.T) {
 			if p != nil {
 				t.Fatal(p)
 			}
-			if want := number(t, gnu(t, function, "K")); !within(q.Value, want, 1e-14) {
+			if want := published.Number(t, gnu(t, function, "K")); !within(q.Value, want, 1e-14) {
 				t.Errorf("%s %s is %v K, GNU units says %v", x, spelled, q.Value, want)
 			}
 		}

@@ -1,45 +1,13 @@
 package quantity
 
 import (
-	"encoding/csv"
 	"math"
-	"os"
 	"strconv"
 	"strings"
 	"testing"
+
+	"ohmfolio/generator/published"
 )
-
-// rows reads a table of testdata as one map a row.
-func rows(t *testing.T, file string) []map[string]string {
-	t.Helper()
-	f, err := os.Open("testdata/" + file)
-	if err != nil {
-		t.Fatal(err)
-	}
-	defer f.Close()
-	all, err := csv.NewReader(f).ReadAll()
-	if err != nil || len(all) < 2 {
-		t.Fatalf("%s: %d rows, %v", file, len(all), err)
-	}
-	var list []map[string]string
-	for _, r := range all[1:] {
-		m := map[string]string{}
-		for i, name := range all[0] {
-			m[name] = r[i]
-		}
-		list = append(list, m)
-	}
-	return list
-}
-
-func number(t *testing.T, s string) float64 {
-	t.Helper()
-	x, err := strconv.ParseFloat(s, 64)
-	if err != nil {
-		t.Fatalf("%q is no number: %v", s, err)
-	}
-	return x
-}
 
 func within(got, want, relative float64) bool {
 	return math.Abs(got-want) <= relative*math.Abs(want)
@@ -84,9 +52,9 @@ func lastDigit(t *testing.T, s string) float64 {
 // met to half a unit of its last digit, the printed one to a whole unit: 601.54
 // is printed for 601.53.
 func TestPublishedFactors(t *testing.T) {
-	for _, r := range rows(t, "unit_conversions.csv") {
+	for _, r := range published.Rows(t, "unit_conversions.csv") {
 		factor, reciprocal := strings.CutSuffix(r["multiply_by"], "/x")
-		want := number(t, factor)
+		want := published.Number(t, factor)
 		got := 0.0
 		if reciprocal { // %IACS, the only one: 172.41/x
 			one, p := Parse(Conductivity, "1 "+r["from"])
@@ -103,7 +71,7 @@ func TestPublishedFactors(t *testing.T) {
 			t.Errorf("%s: one %s is %v %s, want %v", r["id"], r["from"], got, r["to"], want)
 		}
 		printed := strings.TrimSuffix(r["published_as"], "/x")
-		if printed != "" && math.Abs(got-number(t, printed)) > lastDigit(t, printed) {
+		if printed != "" && math.Abs(got-published.Number(t, printed)) > lastDigit(t, printed) {
 			t.Errorf("%s: one %s is %v %s, printed %s", r["id"], r["from"], got, r["to"], printed)
 		}
 	}
@@ -114,7 +82,7 @@ func TestUnitCodes(t *testing.T) {
 	left := map[string]bool{ // no unit of the trade's tables
 		"kiloohm metre": true, "ohm kilometre": true, "ohm foot": true,
 	}
-	for _, r := range rows(t, "resistivity_unit_codes.csv") {
+	for _, r := range published.Rows(t, "resistivity_unit_codes.csv") {
 		if left[r["name"]] {
 			continue
 		}
@@ -123,7 +91,7 @@ func TestUnitCodes(t *testing.T) {
 			t.Errorf("%s: the code %s is not read", r["name"], r["ucum"])
 			continue
 		}
-		if want := number(t, r["factor_to_ohm_metre"]); !within(u.ToSI(1), want, 1e-14) {
+		if want := published.Number(t, r["factor_to_ohm_metre"]); !within(u.ToSI(1), want, 1e-14) {
 			t.Errorf("%s: %v Ω·m, want %v", r["name"], u.ToSI(1), want)
 		}
 		if u.UCUM != r["ucum"] && r["ucum"] != "Ohm.m2/m" { // Ω·m²/m is another way to write Ω·m
@@ -131,7 +99,7 @@ func TestUnitCodes(t *testing.T) {
 		}
 	}
 	kinds := map[string]Kind{"Ohm": Resistance, "Ohm/m": ResistancePerLength, "S/m": Conductivity, "K": Temperature, "K-1": Coefficient1, "m2": Area, "m": Length}
-	for _, r := range rows(t, "related_unit_codes.csv") {
+	for _, r := range published.Rows(t, "related_unit_codes.csv") {
 		k := kinds[r["si_base"]]
 		if r["ucum"] == "[degF]-1" {
 			continue // no valid code: special units stand alone (UCUM, section 22)
@@ -150,12 +118,12 @@ func TestUnitCodes(t *testing.T) {
 // TestKuphaldtTable: two printed columns of one table, Ω·cmil/ft and µΩ·cm,
 // agree within 0.05 %, the rounding of the shorter one.
 func TestKuphaldtTable(t *testing.T) {
-	for _, r := range rows(t, "kuphaldt_specific_resistance_20C.csv") {
+	for _, r := range published.Rows(t, "kuphaldt_specific_resistance_20C.csv") {
 		q, p := Parse(Resistivity, r["ohm_cmil_per_ft"]+" ohm cmil/ft")
 		if p != nil {
 			t.Fatal(p)
 		}
-		got, want := mustFind(t, Resistivity, "uohm cm").FromSI(q.Value), number(t, r["micro_ohm_cm"])
+		got, want := mustFind(t, Resistivity, "uohm cm").FromSI(q.Value), published.Number(t, r["micro_ohm_cm"])
 		if !within(got, want, 5e-4) {
 			t.Errorf("%s: %v µΩ·cm, printed %v", r["material"], got, want)
 		}
@@ -170,16 +138,16 @@ func TestAWG(t *testing.T) {
 		t.Errorf("ends: %v and %v", AWG(-3)/inch, AWG(36)/inch)
 	}
 	mil := mustFind(t, Area, "cmil")
-	for _, r := range rows(t, "awg_diameters.csv") {
+	for _, r := range published.Rows(t, "awg_diameters.csv") {
 		n, ok := ParseAWG("AWG " + r["AWG"])
 		if !ok {
 			t.Fatalf("AWG %s is not read", r["AWG"])
 		}
 		d := AWG(n)
-		if want := number(t, r["diameter_in_printed_S12"]) * inch; math.Abs(d-want) > 2e-5*inch {
+		if want := published.Number(t, r["diameter_in_printed_S12"]) * inch; math.Abs(d-want) > 2e-5*inch {
 			t.Errorf("AWG %s: %v in, printed %v", r["AWG"], d/inch, want/inch)
 		}
-		if area, want := mil.FromSI(math.Pi/4*d*d), number(t, r["area_cmil_printed_S7"]); !within(area, want, 2e-3) {
+		if area, want := mil.FromSI(math.Pi/4*d*d), published.Number(t, r["area_cmil_printed_S7"]); !within(area, want, 2e-3) {
 			t.Errorf("AWG %s: %v cmil, printed %v", r["AWG"], area, want)
 		}
 	}

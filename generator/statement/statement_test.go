@@ -1,17 +1,15 @@
 package statement
 
 import (
-	"encoding/csv"
 	"errors"
 	"math"
-	"os"
-	"strconv"
 	"strings"
 	"testing"
 
 	"ohmfolio/generator/library"
 	"ohmfolio/generator/material"
 	"ohmfolio/generator/place"
+	"ohmfolio/generator/published"
 	"ohmfolio/generator/quantity"
 )
 
@@ -180,9 +178,9 @@ func TestWireTables(t *testing.T) {
 		return v
 	}
 	compared := 0
-	for _, row := range rows(t, "awg_solid_copper.csv") {
+	for _, row := range published.Rows(t, "awg_solid_copper.csv") {
 		n, ok := quantity.ParseAWG("AWG " + row["AWG"])
-		calc, okCalc := number(row["ohm_per_1000ft_20C_calc_IACS"])
+		calc, okCalc := published.Optional(row["ohm_per_1000ft_20C_calc_IACS"])
 		if !ok || !okCalc {
 			continue
 		}
@@ -192,9 +190,9 @@ func TestWireTables(t *testing.T) {
 		}
 		compared++
 	}
-	for _, row := range rows(t, "cumn12ni_wire_awg.csv") {
+	for _, row := range published.Rows(t, "cumn12ni_wire_awg.csv") {
 		n, _ := quantity.ParseAWG("AWG " + row["AWG"])
-		want, _ := number(row["ohm_per_ft"])
+		want, _ := published.Optional(row["ohm_per_ft"])
 		d := quantity.AWG(n)
 		if got := rho("cumn12ni") / (math.Pi / 4 * d * d) * 0.3048; math.Abs(got/want-1) > 0.006 {
 			t.Errorf("CuMn12Ni AWG %s: %g Ω/ft, published %g", row["AWG"], got, want)
@@ -215,9 +213,9 @@ func TestCableTables(t *testing.T) {
 	copper := lib.Material("copper-annealed").Adopted
 	rho, _ := material.Reading{Told: copper.Rho}.At(kelvin + 20)
 	compared := 0
-	for _, row := range rows(t, "iec60228_max_resistance_20C.csv") {
-		r, okR := number(row["class2_Cu_plain_ohm_per_km"])
-		want, okA := number(row["solid_IACS_area_that_would_give_class2_R_mm2"])
+	for _, row := range published.Rows(t, "iec60228_max_resistance_20C.csv") {
+		r, okR := published.Optional(row["class2_Cu_plain_ohm_per_km"])
+		want, okA := published.Optional(row["solid_IACS_area_that_would_give_class2_R_mm2"])
 		if okR && okA {
 			if got := rho / (r * 1e-3) * 1e6; math.Abs(got/want-1) > 3e-4 {
 				t.Errorf("%s mm²: area %g mm², published %g", row["nominal_area_mm2"], got, want)
@@ -225,10 +223,10 @@ func TestCableTables(t *testing.T) {
 			compared++
 		}
 	}
-	for _, row := range rows(t, "iec60228_temperature_correction.csv") {
-		c, _ := number(row["t_C"])
-		formula, _ := number(row["kt_Cu_calc_254.5/(234.5+t)"])
-		printed, _ := number(row["kt_printed_S15"])
+	for _, row := range published.Rows(t, "iec60228_temperature_correction.csv") {
+		c, _ := published.Optional(row["t_C"])
+		formula, _ := published.Optional(row["kt_Cu_calc_254.5/(234.5+t)"])
+		printed, _ := published.Optional(row["kt_printed_S15"])
 		ratio, ok := material.Reading{Told: copper.Ratio}.At(kelvin + c)
 		if !ok {
 			continue
@@ -241,33 +239,6 @@ func TestCableTables(t *testing.T) {
 	if compared < 15 {
 		t.Errorf("only %d values were compared", compared)
 	}
-}
-
-func rows(t *testing.T, file string) []map[string]string {
-	t.Helper()
-	f, err := os.Open("testdata/" + file)
-	if err != nil {
-		t.Fatal(err)
-	}
-	defer f.Close()
-	all, err := csv.NewReader(f).ReadAll()
-	if err != nil {
-		t.Fatal(err)
-	}
-	var list []map[string]string
-	for _, r := range all[1:] {
-		m := map[string]string{}
-		for i, name := range all[0] {
-			m[name] = r[i]
-		}
-		list = append(list, m)
-	}
-	return list
-}
-
-func number(s string) (float64, bool) {
-	x, err := strconv.ParseFloat(s, 64)
-	return x, err == nil
 }
 
 func TestRoundSteps(t *testing.T) {
