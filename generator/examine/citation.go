@@ -9,7 +9,7 @@ import (
 // cited calls f for every citation of a record, with the node it stands at.
 func cited(r *material.Record, f func(c material.Citation, n *form.Node, what string)) {
 	for _, s := range r.Sets {
-		f(s.Source, s.Source.Node, "data set "+s.Name)
+		f(s.Source, s.Source.Node, s.Label())
 	}
 	for _, p := range r.Properties {
 		f(p.Source, p.Source.Node, p.Name)

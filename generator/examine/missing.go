@@ -21,7 +21,7 @@ var basisMissing = Rule{
 			if r.Status == material.Released && (r.Family == material.ResistanceAlloys || r.Family == material.StandardConductors) {
 				severity = place.Error
 			}
-			p.findAtAs(severity, r, s.Node, "data set "+s.Name+" does not state its basis: "+
+			p.findAtAs(severity, r, s.Node, s.Label()+" does not state its basis: "+
 				"ratios may differ by up to 30 ppm/K × (T − T_ref)", p.rule.Kind.Mend)
 		}
 	},
@@ -37,7 +37,7 @@ var conditionMissing = Rule{
 	Record: func(p *Pass, r *material.Record) {
 		for _, s := range r.Sets {
 			if s.Condition == "" {
-				p.findAtAs(releasedElse(r, place.Error, place.Warning), r, s.Node, "data set "+s.Name+" does not state its condition", p.rule.Kind.Mend)
+				p.findAtAs(releasedElse(r, place.Error, place.Warning), r, s.Node, s.Label()+" does not state its condition", p.rule.Kind.Mend)
 			}
 		}
 	},
@@ -53,7 +53,7 @@ var classMissing = Rule{
 	Record: func(p *Pass, r *material.Record) {
 		for _, s := range r.Sets {
 			if s.Class == "" {
-				p.findAt(r, s.Node, "data set "+s.Name+" does not state the class of its values", p.rule.Kind.Mend)
+				p.findAt(r, s.Node, s.Label()+" does not state the class of its values", p.rule.Kind.Mend)
 			}
 		}
 	},

@@ -118,7 +118,7 @@ var betaUnlikely = Rule{
 			}
 			switch {
 			case s.Beta == nil && s.Valid.Hi-s.Valid.Lo > 40:
-				p.findAt(r, s.Node.Get("alpha"), "data set "+s.Name+" has no β over a range of more than 40 K", p.rule.Kind.Mend)
+				p.findAt(r, s.Node.Get("alpha"), s.Label()+" has no β over a range of more than 40 K", p.rule.Kind.Mend)
 			case s.Beta != nil && s.Beta.HasValue() && (s.Beta.Value > 0 || s.Beta.Value < -1.2e-6):
 				p.findAt(r, s.Node.Get("beta"), "β = "+quote(s.Beta.Text)+" does not fit a copper-manganese alloy", p.rule.Kind.Mend)
 			}

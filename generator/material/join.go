@@ -36,5 +36,5 @@ func (rd *reader) join(s *DataSet) {
 }
 
 func (rd *reader) cannotJoin(s *DataSet, why string) {
-	rd.list.Add("pieces-do-not-join", place.Error, s.Node.Get("pieces").Position(), "data set "+s.Name+": "+why, "name pieces whose valid ranges adjoin and whose values meet within 0.1 %")
+	rd.list.Add("pieces-do-not-join", place.Error, s.Node.Get("pieces").Position(), s.Label()+": "+why, "name pieces whose valid ranges adjoin and whose values meet within 0.1 %")
 }

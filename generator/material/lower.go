@@ -41,7 +41,7 @@ type native struct {
 func (rd *reader) lower(s *DataSet) {
 	n, err := rd.native(s)
 	if err != nil {
-		rd.list.Add("curve-not-told", place.Error, s.Node.Position(), "data set "+s.Name+": "+err.Error(), "look at the coefficients and the valid range")
+		rd.list.Add("curve-not-told", place.Error, s.Node.Position(), s.Label()+": "+err.Error(), "look at the coefficients and the valid range")
 		return
 	}
 	s.RatioReference = ratioReference(s)
@@ -56,7 +56,7 @@ func (rd *reader) lower(s *DataSet) {
 	b := &lowering{set: s, native: n}
 	b.expansion, b.expands = rd.r.Expansion()
 	if err := b.fill(); err != nil {
-		rd.list.Add("curve-not-told", place.Error, s.Node.Position(), "data set "+s.Name+": "+err.Error(), "look at the coefficients and the valid range")
+		rd.list.Add("curve-not-told", place.Error, s.Node.Position(), s.Label()+": "+err.Error(), "look at the coefficients and the valid range")
 	}
 }
 

@@ -114,7 +114,7 @@ func (rd *reader) resistivity(s *DataSet) {
 	if s.Resistivity != nil && s.Resistivity.HasValue() && s.Resistivity.Value <= 0 {
 		rd.add("resistivity-not-positive", s.Node.Get(s.WrittenAs), "the resistivity "+quote(s.Resistivity.Text)+" is not above zero", "look at sign and unit")
 	}
-	if s.WrittenAs != "" && math.IsNaN(s.Reference) {
+	if s.WrittenAs != "" && math.IsNaN(s.Reference) && !s.Node.Has("reference_temperature") {
 		rd.add("reference-temperature-missing", s.Node.Get(s.WrittenAs), "the "+strings.ReplaceAll(s.WrittenAs, "_", " ")+" has no reference temperature", "add reference_temperature: as the source states it, for example 20 °C")
 	}
 }
@@ -162,7 +162,7 @@ func (rd *reader) model(s *DataSet) {
 		rd.add("alpha-missing", s.Node, "β or γ is given without α", "add alpha: (0 ppm/K where the source says so)")
 	}
 	if s.Model == Point && s.Resistivity == nil && s.WrittenAs == "" {
-		rd.add("data-missing", s.Node, "data set "+s.Name+" states neither a resistivity nor a curve", "add resistivity:, alpha: or table:")
+		rd.add("data-missing", s.Node, s.Label()+" states neither a resistivity nor a curve", "add resistivity:, alpha: or table:")
 	}
 	rd.modelParts(s)
 }
@@ -180,7 +180,7 @@ func (rd *reader) modelParts(s *DataSet) {
 	n := s.Node
 	switch s.Model {
 	case PolynomialModel:
-		if math.IsNaN(s.Reference) {
+		if s.WrittenAs == "" && math.IsNaN(s.Reference) && !n.Has("reference_temperature") {
 			rd.add("reference-temperature-missing", n.Get("alpha"), "the coefficient has no reference temperature", "add reference_temperature: as the source states it, for example 20 °C")
 		}
 	case TableModel:
@@ -256,7 +256,7 @@ func (rd *reader) validRange(s *DataSet) {
 	case s.Model == Point:
 		s.Valid = Window{Lo: s.Reference, Hi: s.Reference}
 	case s.Model == PolynomialModel || s.Model == CallendarModel || s.Model == BlochModel:
-		rd.add("valid-range-missing", s.Node, "data set "+s.Name+" has a curve and no valid range", "add valid_range: as far as the source's own data go, for example 0 °C to 100 °C")
+		rd.add("valid-range-missing", s.Node, s.Label()+" has a curve and no valid range", "add valid_range: as far as the source's own data go, for example 0 °C to 100 °C")
 	}
 }
 

@@ -61,6 +61,14 @@ const Slack = 1e-9
 // Contains tells whether t (K) lies in the closed window.
 func (w Window) Contains(t float64) bool { return t >= w.Lo-Slack && t <= w.Hi+Slack }
 
+// Label names the set in messages: the record itself where it has but one.
+func (s *DataSet) Label() string {
+	if s.Name == soleName {
+		return "the record"
+	}
+	return "data set " + s.Name
+}
+
 // Digits is the number of significant digits that the source justifies for an
 // absolute value: those of the resistivity as printed, or of the table's rows,
 // at least three.
