@@ -229,7 +229,7 @@ func TestBindingStudy(t *testing.T) {
 
 // TestHelp: every command has a form and an example of its own.
 func TestHelp(t *testing.T) {
-	for _, c := range []string{"publish", "examine", "value", "tcr"} {
+	for _, c := range []string{"publish", "examine", "value", "tcr", "fit"} {
 		code, out, _ := run(c, "--help")
 		if code != 0 || !strings.Contains(out, "Example:") || !strings.Contains(out, "ohmfolio "+c) {
 			t.Errorf("help of %s: exit %d\n%s", c, code, out)
