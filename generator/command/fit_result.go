@@ -225,7 +225,7 @@ func (m *measured) text(w io.Writer) {
 	for _, c := range m.common {
 		fmt.Fprintf(w, "  common to all points, %s: u(%s) = %.2g %s, included above\n", c.From, c.To, c.U, c.Unit)
 	}
-	fmt.Fprintf(w, "  residual standard deviation %.3g ppm, largest residual %.3g ppm, R² %.6f\n", m.r.SD/m.r.B[0]*1e6*m.sdScale(), m.r.LargestResidual(), m.r.RSquared)
+	fmt.Fprintf(w, "  residual standard deviation %.3g ppm, largest residual %.3g ppm, R² %.6f\n", m.r.Scatter()/m.r.B[0]*1e6, m.r.LargestResidual(), m.r.RSquared)
 	if !math.IsNaN(m.r.ChiSquare) {
 		fmt.Fprintf(w, "  χ²/ν %.3g\n", m.r.ChiSquare)
 	}
@@ -237,19 +237,6 @@ func (m *measured) text(w io.Writer) {
 		fmt.Fprintf(w, "  outlier (kept): line %d, %s °C, residual %.3g ppm\n", o.Line, quantity.KelvinText(o.TemperatureC), o.ResidualPPM)
 	}
 	fmt.Fprint(w, warningsText(m.r.Warnings))
-}
-
-// sdScale turns the standard deviation of a weighted fit, which is in units of
-// the given uncertainties, into the value's.
-func (m *measured) sdScale() float64 {
-	if !m.r.Options.Weighted {
-		return 1
-	}
-	sum := 0.0
-	for _, p := range m.points {
-		sum += 1 / (p.U * p.U)
-	}
-	return math.Sqrt(float64(len(m.points)) / sum)
 }
 
 // yaml writes a data set ready to paste; what only a person knows is left to

@@ -95,11 +95,14 @@ func (s *session) printAnswer(a statement.Answer) {
 		at += " over its value at " + quantity.CelsiusText(*a.ReferenceC+quantity.ZeroCelsius)
 	}
 	line("what", a.Quantity+" of "+a.Material+" at "+at)
-	band := strings.TrimPrefix(a.Band, "limits ")
-	if band == "" {
-		band = "not stated"
+	switch {
+	case a.Band == "":
+		line("limits", "not stated")
+	case a.Limits == nil:
+		line("uncertainty", a.Band)
+	default:
+		line("limits", strings.TrimPrefix(a.Band, "limits "))
 	}
-	line("limits", band)
 	line("valid range", quantity.CelsiusText(a.ValidRangeC[0]+quantity.ZeroCelsius)+" to "+quantity.CelsiusText(a.ValidRangeC[1]+quantity.ZeroCelsius))
 	line("data", fmt.Sprintf("%s, basis %s, class %s, condition %s", a.Data, a.Basis, a.Class, a.Condition))
 	line("source", a.Source+", checked against: "+a.Checked)

@@ -204,6 +204,19 @@ func (r *Result) LargestResidual() float64 {
 	return largest / r.B[0] * 1e6
 }
 
+// Scatter is the residual standard deviation in the value's unit, whether or
+// not the fit was weighted: √(Σ r²/dof).
+func (r *Result) Scatter() float64 {
+	if r.Dof == 0 {
+		return 0
+	}
+	sum := 0.0
+	for _, e := range r.Residuals {
+		sum += float64(e * e)
+	}
+	return math.Sqrt(sum / float64(r.Dof))
+}
+
 // EffectiveDof is the Welch-Satterthwaite number of degrees of freedom of a
 // sum of independent components with standard uncertainties u and degrees of
 // freedom dof (JCGM 100, G.4); +Inf when no component with finite dof counts.

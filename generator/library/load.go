@@ -161,13 +161,30 @@ func (l *loader) record(name string) *material.Record {
 	if src == nil {
 		return nil
 	}
-	r, findings := material.Read(stem(name), src)
+	r, findings := material.Read(stem(name), src, l.readBeside)
 	l.findings = append(l.findings, findings...)
+	if r != nil {
+		l.beside(r)
+	}
 	if place.Count(findings, place.Error) > 0 {
 		return nil
 	}
-	l.beside(r)
 	return r
+}
+
+// readBeside reads a CSV file beside a record; what is wrong with its name is
+// told by beside.
+func (l *loader) readBeside(name string) *place.Source {
+	full := path.Join("materials", name)
+	info, err := fs.Stat(l.fsys, full)
+	if err != nil || path.Base(name) != name || info.Size() > maxPoints {
+		return nil
+	}
+	text, err := fs.ReadFile(l.fsys, full)
+	if err != nil {
+		return nil
+	}
+	return place.NewSource(full, text)
 }
 
 // maxPoints is the most bytes that a file of measured points or lots may have.

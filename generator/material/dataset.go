@@ -44,6 +44,7 @@ type DataSet struct {
 	Callendar   *curve.CallendarVanDusen
 	Pieces      []string
 	PointsFile  string
+	Fitted      *Fitted // of measured points
 
 	Valid Window // K; a Point without valid_range has Lo = Hi = Reference
 

@@ -4,6 +4,7 @@ import (
 	"bytes"
 	"crypto/sha256"
 	"encoding/hex"
+	"fmt"
 
 	"ohmfolio/generator/form"
 )
@@ -19,9 +20,18 @@ var administrative = map[string]bool{
 // canonical values, however the YAML is spelled. Twelve hexadecimal digits in
 // groups of four: 48 bits tell the revisions of one record apart, and can be
 // read out over a telephone.
-func fingerprint(n *form.Node) string {
+// Measured points count with their values, wherever their file stands.
+func fingerprint(n *form.Node, sets []*DataSet) string {
 	var b bytes.Buffer
 	n.Canonical(&b, func(key string) bool { return administrative[key] })
+	for _, s := range sets {
+		if s.Fitted == nil {
+			continue
+		}
+		for _, p := range s.Fitted.Points {
+			fmt.Fprintf(&b, "%.12g %.12g %.12g %.12g;", p.T, p.Y, p.U, p.UT)
+		}
+	}
 	sum := sha256.Sum256(b.Bytes())
 	h := hex.EncodeToString(sum[:6])
 	return h[:4] + "-" + h[4:8] + "-" + h[8:]

@@ -27,7 +27,7 @@ notes: A remark.
 
 func print(t *testing.T, text string) string {
 	t.Helper()
-	r, findings := Read("x", place.NewSource("materials/x.yaml", []byte(text)))
+	r, findings := Read("x", place.NewSource("materials/x.yaml", []byte(text)), nil)
 	if place.Count(findings, place.Error) > 0 {
 		t.Fatalf("%v in\n%s", findings, text)
 	}

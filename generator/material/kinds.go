@@ -30,6 +30,10 @@ var Kinds = []place.Kind{
 		"name: X\nsource: standard\nbasis: resistivity\nvalid_range: 4 K to 300 K\nbloch_gruneisen: {residual: 0.002 µΩ·cm, debye_temperature: 328 K, amplitude: 7.81 µΩ·cm, exponent: 4}\n", "write the exponent that the source fits with"),
 	kind("factor-not-one", "A factor table is not 1 at its reference temperature", "R/R_ref is 1 at the reference temperature by definition.",
 		smallest+"resistivity: 109 µΩ·cm\ntable: {temperature: °C, resistance_ratio: 1, rows: [[0, 0.99], [20, 1.02], [60, 1.03]]}\n", "look at the reference temperature, or at the row"),
+	kind("fit-missing", "Points without a fit, or a degree that is not fitted", "Measured points need the temperature of their coefficients and a degree of 1, 2 or 3.",
+		"name: X\nsource: standard\nbasis: resistance\npoints: x.csv\n-- materials/x.csv --\ntemperature / °C,resistance / Ω\n20,1\n30,1.1\n", "add fit: {reference_temperature: 25 °C, degree: 2}"),
+	warning("fit-doubtful", "A fit says less than it seems to", "As many coefficients as points, a degree that the data do not support, points further off than chance allows, or repeated readings that the curve misses.",
+		"name: X\nsource: standard\nbasis: resistance\npoints: x.csv\nfit: {reference_temperature: 20 °C, degree: 1}\n-- materials/x.csv --\ntemperature / °C,resistance / Ω\n20,1\n30,1.1\n", "look at the residuals on the page"),
 	kind("gauge-unknown", "A wire gauge is not understood", "American wire gauge from 4/0 to 56.",
 		smallest+"resistivity: 43 µΩ·cm\nalpha: 10 ppm/K\nstock: [{form: wire, gauge: AWG 99}]\n", "write AWG 24"),
 	kind("iacs-not-at-20", "%IACS away from 20 °C", "%IACS compares with standard copper at 20 °C and means nothing at another temperature.",
@@ -40,6 +44,10 @@ var Kinds = []place.Kind{
 		"name: X\nadopt: a\ndata_sets:\n  a: {source: standard, pieces: [b, c]}\n", "name data sets of this record"),
 	kind("pieces-do-not-join", "Pieces do not meet", "Their valid ranges must adjoin and their values meet within 0.1 %.",
 		"name: X\nadopt: j\ndata_sets:\n  a: {source: standard, basis: resistivity, table: {temperature: K, resistivity: µΩ·cm, rows: [[100, 1], [200, 2]]}}\n  b: {source: standard, basis: resistivity, table: {temperature: K, resistivity: µΩ·cm, rows: [[200, 3], [300, 4]]}}\n  j: {source: standard, pieces: [a, b]}\n", "look at the values at the shared edge"),
+	kind("points-not-fitted", "Points that determine no curve", "Fewer points than coefficients, or all at one temperature.",
+		"name: X\nsource: standard\nbasis: resistance\npoints: x.csv\nfit: {reference_temperature: 20 °C, degree: 2}\n-- materials/x.csv --\ntemperature / °C,resistance / Ω\n20,1\n30,1.1\n", "lower the degree, or measure at more temperatures"),
+	warning("range-beyond-points", "The valid range reaches beyond the measured points", "A fit says nothing beyond the temperatures that were measured.",
+		"name: X\nsource: standard\nbasis: resistance\npoints: x.csv\nfit: {reference_temperature: 20 °C, degree: 1}\nvalid_range: 0 °C to 100 °C\n-- materials/x.csv --\ntemperature / °C,resistance / Ω\n20,1\n30,1.1\n40,1.2\n", "narrow the range, or measure further"),
 	kind("range-beyond-table", "The valid range reaches beyond the table", "No value is given outside what the source covers.",
 		"name: X\nsource: standard\nbasis: resistivity\nvalid_range: 50 K to 400 K\ntable: {temperature: K, resistivity: µΩ·cm, rows: [[100, 1], [300, 3]]}\n", "narrow the range"),
 	kind("range-inverted", "A range does not rise", "Ranges are written from the lower to the upper temperature.",
@@ -60,6 +68,8 @@ var Kinds = []place.Kind{
 		"name: X\nsource: standard\nbasis: resistivity\ntable: {temperature: K, resistivity: µΩ·cm, rows: [[300, 3]]}\n", "add rows"),
 	kind("source-missing", "Values without a source", "A number that cannot be traced cannot be trusted.",
 		"name: X\nresistivity: 43 µΩ·cm\nreference_temperature: 20 °C\n", "add source: with an ID of materials/sources.yaml"),
+	warning("specimen-incomplete", "ρ cannot be told from measured points", "Points give R; ρ needs the length between the taps and the section.",
+		"name: X\nsource: standard\nbasis: resistance\npoints: x.csv\nfit: {reference_temperature: 20 °C, degree: 1}\nspecimen: {between_taps: 200 mm, width: 10 mm}\n-- materials/x.csv --\ntemperature / °C,resistance / Ω\n20,1\n30,1.1\n40,1.2\n", "add what is missing, or leave specimen out and tell ratios only"),
 	kind("table-unit", "A table does not say what its numbers are", "Units of temperature and value stand in the table, as in its printed head.",
 		"name: X\nsource: standard\nbasis: resistivity\ntable: {temperature: K, rows: [[100, 1], [300, 3]]}\n", "add resistivity: µΩ·cm, conductivity: MS/m or resistance_ratio: 1"),
 	kind("thickness-missing", "A sheet resistance without a thickness", "ρ = R per square × thickness.",
@@ -70,4 +80,10 @@ var Kinds = []place.Kind{
 
 func kind(code, title, explanation, record, mend string) place.Kind {
 	return place.Kind{Code: code, Severity: place.Error, Title: title, Explanation: explanation, Trigger: sourcesHead + record, Mend: mend}
+}
+
+func warning(code, title, explanation, record, mend string) place.Kind {
+	k := kind(code, title, explanation, record, mend)
+	k.Severity = place.Warning
+	return k
 }

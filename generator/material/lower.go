@@ -78,6 +78,11 @@ func (rd *reader) native(s *DataSet) (native, error) {
 	switch s.Model {
 	case PolynomialModel:
 		return polynomialNative(s), nil
+	case PointsModel:
+		if s.Fitted == nil {
+			return native{}, nil
+		}
+		return polynomialNative(s), nil
 	case TableModel:
 		c, err := curve.Table(s.Table.T, s.Table.Y, s.Table.Linear)
 		if err != nil {

@@ -216,6 +216,10 @@ func (b *lowering) coverage(withResistivity bool) (covers, missing []string) {
 // uncertainty combines the stated uncertainties to first order (JCGM 100,
 // 5.1.2), the coefficients taken as uncorrelated.
 func (b *lowering) uncertainty(t *Told, withResistivity bool) {
+	if b.set.Fitted != nil {
+		b.fittedUncertainty(t, withResistivity)
+		return
+	}
 	type term struct {
 		u     float64 // relative to y_ref, per K^power
 		power int
@@ -258,5 +262,28 @@ func (b *lowering) uncertainty(t *Told, withResistivity bool) {
 			sum += float64(d * d)
 		}
 		return math.Abs(v/y) * math.Sqrt(sum)
+	}
+}
+
+// fittedUncertainty comes from the covariance of the fit and the common parts.
+func (b *lowering) fittedUncertainty(t *Told, absolute bool) {
+	f, nominal, shape := b.set.Fitted, t.Nominal, b.native.nominal
+	t.K = math.Round(f.K*100) / 100
+	t.Covers = []string{"scatter of the fit, with its covariance"}
+	for _, line := range f.Budget {
+		if absolute || line.Alpha > 0 {
+			t.Covers = append(t.Covers, line.From)
+		}
+	}
+	if absolute && len(f.Budget) == 0 {
+		t.NotCovered = []string{"thermometer, bridge and geometry: no uncertainty stated"}
+	}
+	t.Uncertainty = func(at float64) float64 {
+		y, ok := shape.At(at)
+		v, ok2 := nominal.At(at)
+		if !ok || !ok2 || y == 0 {
+			return math.NaN()
+		}
+		return math.Abs(v/y) * f.uncertaintyAt(at, absolute)
 	}
 }

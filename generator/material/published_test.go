@@ -19,7 +19,7 @@ func demoRecord(t *testing.T, id string) *Record {
 	if err != nil {
 		t.Fatal(err)
 	}
-	r, findings := Read(id, place.NewSource("materials/"+id+".yaml", text))
+	r, findings := Read(id, place.NewSource("materials/"+id+".yaml", text), nil)
 	if place.Count(findings, place.Error) > 0 {
 		t.Fatalf("%s: %v", id, findings)
 	}
@@ -176,7 +176,7 @@ func TestBasisMatters(t *testing.T) {
 		return "name: X\nsource: s\nbasis: " + basis + "\nresistivity: 43 µΩ·cm\nalpha: 10 ppm/K\nbeta: -0.5 ppm/K²\nreference_temperature: 20 °C\nvalid_range: -40 °C to 125 °C\nproperties:\n  expansion: {value: 18e-6 /K, source: s}\n"
 	}
 	ratio := func(basis string) float64 {
-		r, findings := Read("x", place.NewSource("materials/x.yaml", []byte(text(basis))))
+		r, findings := Read("x", place.NewSource("materials/x.yaml", []byte(text(basis))), nil)
 		if place.Count(findings, place.Error) > 0 {
 			t.Fatal(findings)
 		}

@@ -9,20 +9,26 @@ import (
 // soleName is the name of the data set of a record that has one at its top.
 const soleName = "data"
 
+// Beside gives the text of a file beside the record, nil when it is not there
+// (told by whoever reads files).
+type Beside func(name string) *place.Source
+
 // reader turns the checked YAML of one record into a Record.
 type reader struct {
-	r    *Record
-	list place.List
+	r      *Record
+	list   place.List
+	beside Beside
 }
 
-// Read reads one record. The record is nil when it cannot be read; findings
-// that are errors leave it unfit for use.
-func Read(id string, src *place.Source) (*Record, []place.Finding) {
+// Read reads one record; beside gives the CSV files that it names. The record
+// is nil when it cannot be read; findings that are errors leave it unfit for
+// use.
+func Read(id string, src *place.Source, beside Beside) (*Record, []place.Finding) {
 	node, findings := form.Read(src, recordShape)
 	if node == nil {
 		return nil, findings
 	}
-	rd := &reader{r: &Record{ID: id, Source: src, Node: node}, list: place.List{Source: src, Findings: findings}}
+	rd := &reader{r: &Record{ID: id, Source: src, Node: node}, list: place.List{Source: src, Findings: findings}, beside: beside}
 	broken := place.Count(findings, place.Error) > 0
 	rd.identity()
 	rd.properties()
@@ -31,7 +37,7 @@ func Read(id string, src *place.Source) (*Record, []place.Finding) {
 		return rd.r, rd.list.Findings
 	}
 	rd.lowerAll()
-	rd.r.Fingerprint = fingerprint(node)
+	rd.r.Fingerprint = fingerprint(node, rd.r.Sets)
 	return rd.r, rd.list.Findings
 }
 

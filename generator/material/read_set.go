@@ -90,6 +90,9 @@ func (rd *reader) dataSet(name string, n *form.Node) *DataSet {
 	rd.resistivity(s)
 	rd.model(s)
 	rd.validRange(s)
+	if s.Model == PointsModel {
+		rd.fitPoints(s)
+	}
 	return s
 }
 

@@ -96,4 +96,6 @@ var specimenShape = &form.Shape{Name: "specimen", Doc: "Geometry of a specimen."
 	{Key: "mass", Is: form.Quantity(quantity.Mass), Doc: "Mass of the length between the ends.", Example: "21.30 g ± 0.02 g (k=2)"},
 	{Key: "length", Is: form.Quantity(quantity.Length), Doc: "Whole length that the mass belongs to.", Example: "1000 mm ± 1 mm (k=2)"},
 	{Key: "at", Is: form.Quantity(quantity.Temperature), Doc: "Temperature of the dimensions.", Example: "23 °C"},
+	{Key: "thermometer", Is: form.Quantity(quantity.TemperatureDifference), Doc: "Uncertainty common to all temperatures.", Example: "0 K ± 0.04 K (k=2)"},
+	{Key: "bridge", Is: form.Quantity(quantity.Ratio), Doc: "Relative uncertainty common to all resistances.", Example: "0 % ± 0.01 % (k=2)"},
 }}

@@ -100,7 +100,7 @@ func (s *DataSet) RatioDecimals() int {
 // resistivity, 1 when there is none); false for other models and for limits
 // without a nominal.
 func (s *DataSet) Polynomial() (curve.Polynomial, bool) {
-	if s.Model != PolynomialModel {
+	if s.Model != PolynomialModel && s.Fitted == nil {
 		return curve.Polynomial{}, false
 	}
 	p := curve.Polynomial{Y0: 1, Reference: s.Reference}

@@ -79,7 +79,7 @@ func (b *builder) notStated() []string {
 		add(b.set.Basis == "", "basis of the temperature coefficient")
 		add(b.set.Class == "", "class of the values")
 		add(b.set.Condition == "", "condition (temper, form)")
-		add(b.set.Resistivity == nil && b.set.Table == nil && b.set.Callendar == nil, "resistivity")
+		add(b.set.Resistivity == nil && b.set.Table == nil && b.set.Callendar == nil && !b.set.Rho.HasNominal(), "resistivity")
 		add(b.set.Resistivity != nil && b.set.Resistivity.Limits == nil && b.set.Resistivity.Uncertainty == nil, "limits of the resistivity")
 		add(b.set.Model == material.Point, "temperature coefficient")
 		add(b.set.Alpha != nil && b.set.Alpha.Limits == nil && b.set.Alpha.Uncertainty == nil, "limits of α")

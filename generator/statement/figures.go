@@ -97,6 +97,9 @@ func (b *builder) plotSet(f *figure.Figure, set *material.DataSet, e material.Re
 	if len(line.X) > 1 {
 		f.Lines = append(f.Lines, line)
 	}
+	if points, ok := measuredPoints(set, e, convert, inkOf(ink)); ok {
+		f.Points = append(f.Points, points)
+	}
 	if len(area.X) > 1 && (adopted || len(line.X) == 0) {
 		if len(line.X) == 0 {
 			area.Label = set.Name

@@ -28,6 +28,7 @@ type Statement struct {
 	Deviations     []Deviation
 	PerMetre       Grid // resistance per metre of stock, or of common sizes
 	PerMetreOf     string
+	Measured       []Measured // one for each data set of measured points
 	Limits         []LimitRow // class figures held against the curve
 	NotStated      []string   // "limits of beta", "condition"
 	Caveats        []string
@@ -104,6 +105,7 @@ func Of(lib *library.Library, r *material.Record) *Statement {
 	b.tables()
 	b.properties()
 	b.dataSets()
+	b.measured()
 	b.figures()
 	s.Sources = SourcesOf(lib, r)
 	return s
