@@ -10,6 +10,7 @@ import (
 
 	"github.com/spf13/cobra"
 
+	"ohmfolio/generator/columns"
 	"ohmfolio/generator/fit"
 	"ohmfolio/generator/place"
 	"ohmfolio/generator/quantity"
@@ -113,7 +114,7 @@ func (s *session) points(file string) ([]fit.Point, fit.Header, error) {
 	if err != nil {
 		return nil, fit.Header{}, requestError{fmt.Errorf("the points file cannot be read: %w", err)}
 	}
-	if info.Size() > fit.MaxBytes {
+	if info.Size() > columns.MaxBytes {
 		return nil, fit.Header{}, wrong("%s is larger than 64 MiB", file)
 	}
 	text, err := os.ReadFile(file)

@@ -5,6 +5,7 @@ import (
 	"strings"
 	"testing"
 
+	"ohmfolio/generator/columns"
 	"ohmfolio/generator/place"
 )
 
@@ -64,7 +65,7 @@ func TestReadPointsRefuses(t *testing.T) {
 // TestRubbish: a long file of rubbish is told in a few findings.
 func TestRubbish(t *testing.T) {
 	_, _, findings := read("temperature / °C,resistance / Ω\n" + strings.Repeat("x,y\n", 100000))
-	if len(findings) != shownFindings+1 || !strings.Contains(findings[len(findings)-1].Message, "99980 more") {
+	if len(findings) != columns.Shown+1 || !strings.Contains(findings[len(findings)-1].Message, "99980 more") {
 		t.Errorf("%d findings, the last: %+v", len(findings), findings[len(findings)-1])
 	}
 }

@@ -11,6 +11,7 @@ import (
 	"sync"
 	"testing/fstest"
 
+	"ohmfolio/generator/columns"
 	"ohmfolio/generator/form"
 	"ohmfolio/generator/material"
 	"ohmfolio/generator/place"
@@ -177,7 +178,7 @@ func (l *loader) record(name string) *material.Record {
 func (l *loader) readBeside(name string) *place.Source {
 	full := path.Join("materials", name)
 	info, err := fs.Stat(l.fsys, full)
-	if err != nil || path.Base(name) != name || info.Size() > maxPoints {
+	if err != nil || path.Base(name) != name || info.Size() > columns.MaxBytes {
 		return nil
 	}
 	text, err := fs.ReadFile(l.fsys, full)
@@ -186,9 +187,6 @@ func (l *loader) readBeside(name string) *place.Source {
 	}
 	return place.NewSource(full, text)
 }
-
-// maxPoints is the most bytes that a file of measured points or lots may have.
-const maxPoints = 64 << 20
 
 // beside checks that the CSV files of a record stand beside it.
 func (l *loader) beside(r *material.Record) {
@@ -204,7 +202,7 @@ func (l *loader) beside(r *material.Record) {
 			list.Add("file-beside-missing", place.Error, n.Position(), "“"+name+"” is no CSV file beside the record", "write the name of a .csv file in materials/")
 		case err != nil:
 			list.Add("file-beside-missing", place.Error, n.Position(), "the file "+name+" is not there", "put it into materials/, beside the record")
-		case info.Size() > maxPoints:
+		case info.Size() > columns.MaxBytes:
 			list.Add("file-too-large", place.Error, n.Position(), "the file "+name+" is larger than 64 MiB", "split it, or average the readings")
 		}
 		l.findings = append(l.findings, list.Findings...)

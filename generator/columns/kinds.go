@@ -1,4 +1,4 @@
-package fit
+package columns
 
 import "ohmfolio/generator/place"
 
