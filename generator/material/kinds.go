@@ -40,6 +40,8 @@ var Kinds = []place.Kind{
 		"name: X\nsource: standard\nreference_temperature: 25 °C\nconductivity: \"61 %IACS\"\n", "write MS/m at that temperature"),
 	kind("layouts-mixed", "Values at the top beside data sets", "A record has one data set at its top, or several under data_sets.",
 		"name: X\nresistivity: 43 µΩ·cm\nadopt: a\ndata_sets:\n  a: {source: standard, resistivity: 43 µΩ·cm, reference_temperature: 20 °C}\n", "move the key into a data set"),
+	warning("lots-not-compared", "Received lots that nothing can be compared with", "The deviation of a lot is told from the house value; the adopted data set has no resistivity.",
+		"name: X\nsource: standard\nbasis: resistance\nalpha: 10 ppm/K\nreference_temperature: 20 °C\nvalid_range: 0 °C to 60 °C\nlots: x.csv\n-- materials/x.csv --\ndate,lot,resistivity / µΩ·cm,temperature / °C\n2026-01-01,1,43,23\n", "adopt a data set with a resistivity"),
 	kind("piece-unknown", "A piece is no data set", "Pieces are data sets of the same record with a curve of ρ.",
 		"name: X\nadopt: a\ndata_sets:\n  a: {source: standard, pieces: [b, c]}\n", "name data sets of this record"),
 	kind("pieces-do-not-join", "Pieces do not meet", "Their valid ranges must adjoin and their values meet within 0.1 %.",

@@ -37,6 +37,7 @@ func Read(id string, src *place.Source, beside Beside) (*Record, []place.Finding
 		return rd.r, rd.list.Findings
 	}
 	rd.lowerAll()
+	rd.readLots()
 	rd.r.Fingerprint = fingerprint(node, rd.r.Sets)
 	return rd.r, rd.list.Findings
 }

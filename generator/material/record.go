@@ -41,7 +41,8 @@ type Record struct {
 	TCRLimits  []TCRLimit
 	Properties []Property // in file order
 	Stock      []Stock
-	Lots       string // CSV beside the record; read and checked in form only
+	Lots       string // CSV beside the record
+	Received   []Lot  // of that file, in order of dates
 
 	Fingerprint string // over the meaning that a sheet states
 }

@@ -29,6 +29,7 @@ type Statement struct {
 	PerMetre       Grid // resistance per metre of stock, or of common sizes
 	PerMetreOf     string
 	Measured       []Measured // one for each data set of measured points
+	Lots           *Lots      // nil when no lots are recorded
 	Limits         []LimitRow // class figures held against the curve
 	NotStated      []string   // "limits of beta", "condition"
 	Caveats        []string
@@ -106,6 +107,7 @@ func Of(lib *library.Library, r *material.Record) *Statement {
 	b.properties()
 	b.dataSets()
 	b.measured()
+	b.lots()
 	b.figures()
 	s.Sources = SourcesOf(lib, r)
 	return s
