@@ -8,9 +8,9 @@ import (
 
 // Pieces joins curves that follow one another, ascending: each begins where the
 // one before ends, within the slack, and the values there agree within
-// tolerance, relative to the lower piece. The lower piece owns the shared edge.
+// tolerance of that joint, relative to the lower piece. The lower piece owns the shared edge.
 // The error is a Gap, or says that there is nothing to join.
-func Pieces(curves []Curve, tolerance float64) (Curve, error) {
+func Pieces(curves []Curve, tolerance func(joint int) float64) (Curve, error) {
 	var out Curve
 	for i, c := range curves {
 		if len(c.Segments) == 0 {
@@ -18,7 +18,7 @@ func Pieces(curves []Curve, tolerance float64) (Curve, error) {
 		}
 		piece := append([]Segment(nil), c.Segments...)
 		if n := len(out.Segments); n > 0 {
-			if err := joins(&out.Segments[n-1], &piece[0], tolerance); err != nil {
+			if err := joins(&out.Segments[n-1], &piece[0], tolerance(i-1)); err != nil {
 				return Curve{}, err
 			}
 			piece[0].From = out.Segments[n-1].To

@@ -49,7 +49,8 @@ var referenceUnusual = Rule{
 	},
 	Record: func(p *Pass, r *material.Record) {
 		for _, s := range r.Sets {
-			if !math.IsNaN(s.Reference) && !usualReference(s.Reference) {
+			// A chord is counted from wherever its source says.
+			if s.Model != material.ChordModel && !math.IsNaN(s.Reference) && !usualReference(s.Reference) {
 				p.findAt(r, s.Node.Get("reference_temperature"), "the reference temperature "+quantity.CelsiusText(s.Reference)+
 					" is none of the usual 0, 20, 23, 25 and 27\u202f°C", p.rule.Kind.Mend)
 			}

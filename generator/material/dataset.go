@@ -1,6 +1,8 @@
 package material
 
 import (
+	"math"
+
 	"ohmfolio/generator/curve"
 	"ohmfolio/generator/form"
 	"ohmfolio/generator/quantity"
@@ -42,6 +44,7 @@ type DataSet struct {
 	Chord       *Chord
 	Table       *Table
 	Callendar   *curve.CallendarVanDusen
+	Classes     []ToleranceClass // of a thermometer
 	Pieces      []string
 	PointsFile  string
 	Fitted      *Fitted // of measured points
@@ -65,14 +68,31 @@ type Chord struct {
 	From, To float64 // K
 }
 
+// ToleranceClass is a class of thermometers: ±(AtZero + PerDegree·|t|) in
+// kelvin, t in °C (IEC 60751, clause on tolerances).
+type ToleranceClass struct {
+	Name              string
+	AtZero, PerDegree float64
+	Window            *Window // where the source states it, nil when not stated
+}
+
+// At is the tolerance in kelvin at t (K); false outside the stated window.
+func (c ToleranceClass) At(t float64) (float64, bool) {
+	if c.Window != nil && !c.Window.Contains(t) {
+		return 0, false
+	}
+	return c.AtZero + float64(c.PerDegree*math.Abs(t-quantity.ZeroCelsius)), true
+}
+
 // Table is a printed table: temperatures in kelvin, values in SI or ratios.
 type Table struct {
 	T, Y   []float64
 	Ratio  bool // Y is R/R_ref, otherwise resistivity in Ω·m
 	Linear bool
-	Unit   quantity.Unit // of Y as printed
-	Kelvin bool          // temperatures were printed in kelvin
-	Digits int           // significant digits of the rows, the most that any has
+	Unit   quantity.Unit      // of Y as printed
+	Kelvin bool               // temperatures were printed in kelvin
+	Each   *quantity.Quantity // ± of each row as a factor of 1, nil when none is stated
+	Digits int                // significant digits of the rows, the most that any has
 }
 
 // Told is what a data set can tell of one quantity.

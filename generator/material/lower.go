@@ -91,8 +91,7 @@ func (rd *reader) native(s *DataSet) (native, error) {
 		c, err = c.Clip(s.Valid.Lo, s.Valid.Hi)
 		return native{nominal: c, absolute: !s.Table.Ratio}, err
 	case CallendarModel:
-		c, err := s.Callendar.Curve(s.Valid.Lo, s.Valid.Hi)
-		return native{nominal: c}, err
+		return callendarNative(s)
 	case ChordModel:
 		p := curve.Polynomial{Y0: 1, Alpha: s.Chord.Value.Value, Reference: s.Chord.From}
 		return native{nominal: p.Curve(s.Valid.Lo, s.Valid.Hi)}, nil
@@ -100,6 +99,49 @@ func (rd *reader) native(s *DataSet) (native, error) {
 		return blochNative(s)
 	}
 	return native{}, nil
+}
+
+// callendarNative has every corner of the limits of A, B and C.
+func callendarNative(s *DataSet) (native, error) {
+	c, err := s.Callendar.Curve(s.Valid.Lo, s.Valid.Hi)
+	n := native{nominal: c}
+	corners := []curve.CallendarVanDusen{*s.Callendar}
+	limited := false
+	for _, p := range s.stated() {
+		b := boundsOf(s, p.q)
+		if b == nil {
+			continue
+		}
+		limited = true
+		var both []curve.CallendarVanDusen
+		for _, corner := range corners {
+			low, high := corner, corner
+			*coefficientOf(&low, p.name), *coefficientOf(&high, p.name) = b.Lower, b.Upper
+			both = append(both, low, high)
+		}
+		corners = both
+	}
+	if !limited || err != nil {
+		return n, err
+	}
+	for _, corner := range corners {
+		c, err := corner.Curve(s.Valid.Lo, s.Valid.Hi)
+		if err != nil {
+			return native{}, err
+		}
+		n.corners = append(n.corners, c)
+	}
+	return n, nil
+}
+
+func coefficientOf(c *curve.CallendarVanDusen, name string) *float64 {
+	switch name {
+	case "A":
+		return &c.A
+	case "B":
+		return &c.B
+	}
+	return &c.C
 }
 
 func blochNative(s *DataSet) (native, error) {
@@ -165,6 +207,11 @@ func (rd *reader) point(s *DataSet) {
 	s.Rho = t
 }
 
+// tellsResistivity: a set of ratios alone has no ρ to be careful about.
+func tellsResistivity(s *DataSet) bool {
+	return s.Resistivity != nil || s.Model == BlochModel || s.Model == TableModel && !s.Table.Ratio || s.Rho.HasNominal()
+}
+
 // caveats are the sentences that go with every number of the set.
 func (rd *reader) caveats(s *DataSet) {
 	gamma, known := rd.r.Expansion()
@@ -181,7 +228,7 @@ func (rd *reader) caveats(s *DataSet) {
 		s.Caveats = append(s.Caveats, "temperature of the dimensions not stated: ρ is not corrected for expansion and "+by)
 	case !known && s.Basis == Resistivity:
 		s.Caveats = append(s.Caveats, "no expansion recorded: R/R is the ratio of resistivities and "+by)
-	case !known:
+	case !known && tellsResistivity(s):
 		s.Caveats = append(s.Caveats, "no expansion recorded: ρ is told on the dimensions of the reference temperature and "+by)
 	}
 }

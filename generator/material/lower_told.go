@@ -57,7 +57,7 @@ func (b *lowering) fromRatioOfResistivity() error {
 // fromResistivity: the native curve is ρ in Ω·m.
 func (b *lowering) fromResistivity() error {
 	s := b.set
-	s.Rho = b.told(b.native.nominal, nil, 1)
+	s.Rho = b.told(b.native.nominal, b.rowCorners(), 0)
 	if s.Basis == Uncorrected {
 		return b.fromUncorrected()
 	}
@@ -77,8 +77,19 @@ func (b *lowering) fromUncorrected() error {
 		return nil
 	}
 	rho, err := curve.Resistivity(b.native.nominal, b.expansion, s.DimensionsAt)
-	s.Rho = b.told(rho, nil, 1)
-	return err
+	if err != nil {
+		return err
+	}
+	var corners []curve.Curve
+	for _, c := range b.rowCorners() {
+		c, err := curve.Resistivity(c, b.expansion, s.DimensionsAt)
+		if err != nil {
+			return err
+		}
+		corners = append(corners, c)
+	}
+	s.Rho = b.told(rho, corners, 0)
+	return nil
 }
 
 // ratioOf makes R/R_ref of a fixed body from curves of ρ; without a known
@@ -172,97 +183,6 @@ func (b *lowering) told(nominal curve.Curve, corners []curve.Curve, power int) *
 	t.NoLimits = missing
 	b.uncertainty(t, power == 0)
 	return t
-}
-
-// parts are the stated numbers that a band could come from.
-func (b *lowering) parts(withResistivity bool) []part {
-	var list []part
-	if withResistivity && b.set.Resistivity != nil {
-		list = append(list, part{"resistivity", b.set.Resistivity, 0})
-	}
-	for i, q := range []*quantity.Quantity{b.set.Alpha, b.set.Beta, b.set.Gamma} {
-		if q != nil {
-			list = append(list, part{[]string{"α", "β", "γ"}[i], q, i + 1})
-		}
-	}
-	return list
-}
-
-// part is one stated number with the power of (T − T_ref) that it goes with.
-type part struct {
-	name  string
-	q     *quantity.Quantity
-	power int
-}
-
-func (b *lowering) coverage(withResistivity bool) (covers, missing []string) {
-	parts := b.parts(withResistivity)
-	for _, p := range parts {
-		switch {
-		case boundsOf(b.set, p.q) != nil:
-			covers = append(covers, p.name)
-		case b.set.Class == Typical && p.q.Limits != nil:
-			missing = append(missing, p.name+": typical values form no limits")
-		default:
-			missing = append(missing, p.name+": no limits stated")
-		}
-	}
-	if len(parts) == 0 {
-		missing = append(missing, "the rows of the table: no limits stated")
-	}
-	return covers, missing
-}
-
-// uncertainty combines the stated uncertainties to first order (JCGM 100,
-// 5.1.2), the coefficients taken as uncorrelated.
-func (b *lowering) uncertainty(t *Told, withResistivity bool) {
-	if b.set.Fitted != nil {
-		b.fittedUncertainty(t, withResistivity)
-		return
-	}
-	type term struct {
-		u     float64 // relative to y_ref, per K^power
-		power int
-	}
-	var terms []term
-	var covers, missing []string
-	for _, p := range b.parts(withResistivity) {
-		u := p.q.Uncertainty
-		if u == nil {
-			missing = append(missing, p.name+": no uncertainty stated")
-			continue
-		}
-		standard := math.Max(u.Minus, u.Plus) / u.K
-		if p.power == 0 {
-			standard /= p.q.Value
-		}
-		terms, covers, t.K = append(terms, term{standard, p.power}), append(covers, p.name), u.K
-	}
-	if len(terms) == 0 || len(t.Nominal.Segments) == 0 {
-		return
-	}
-	t.Covers, t.NotCovered = covers, append(missing, "correlation of the coefficients: not stated, taken as none")
-	reference := b.set.Reference
-	shape, nominal := b.native.nominal, t.Nominal
-	t.Uncertainty = func(at float64) float64 {
-		y, ok := shape.At(at)
-		v, ok2 := nominal.At(at)
-		if !ok || !ok2 || y == 0 {
-			return math.NaN()
-		}
-		sum := 0.0
-		for _, x := range terms {
-			d := x.u
-			if x.power == 0 {
-				d *= y
-			}
-			for range x.power {
-				d *= at - reference
-			}
-			sum += float64(d * d)
-		}
-		return math.Abs(v/y) * math.Sqrt(sum)
-	}
 }
 
 // fittedUncertainty comes from the covariance of the fit and the common parts.

@@ -16,7 +16,8 @@ import (
 type Fitted struct {
 	Result  fit.Result
 	Points  []fit.Point
-	Section float64 // A/L of the specimen in m, NaN when ρ is not told
+	Section float64 // A/L of the specimen as measured, in m; NaN when ρ is not told
+	Moved   float64 // by expansion from the temperature of the dimensions to the reference temperature, as a factor of A/L
 	Budget  []BudgetLine
 	K       float64 // coverage factor for 95.45 % and the fit's degrees of freedom
 }
@@ -91,7 +92,7 @@ func (s *DataSet) state(h fit.Header) {
 		}
 		*into[i] = fittedQuantity(ppm[i], unit, list[i].Value, u, s.Fitted.K)
 	}
-	scale := s.Fitted.Section
+	scale := float64(s.Fitted.Section * s.Fitted.Moved)
 	switch {
 	case h.Kind == quantity.Resistivity:
 		scale = 1
@@ -174,6 +175,11 @@ func (rd *reader) specimen(s *DataSet, h fit.Header) {
 		return
 	}
 	f.Section = area / length.Value
+	f.Moved = 1
+	at, stated := n.Get("at").Quantity()
+	if gamma, known := rd.r.Expansion(); known && stated {
+		f.Moved = 1 + float64(gamma*(f.Result.Options.Reference-at.Value))
+	}
 	rd.part(f, n, "between_taps", 1, false)
 }
 

@@ -90,6 +90,7 @@ func (rd *reader) dataSet(name string, n *form.Node) *DataSet {
 	rd.resistivity(s)
 	rd.model(s)
 	rd.validRange(s)
+	rd.classes(s)
 	if s.Model == PointsModel {
 		rd.fitPoints(s)
 	}
@@ -216,6 +217,24 @@ func (rd *reader) callendar(s *DataSet) {
 		rd.add("callendar-reference", s.Node.Get("reference_temperature"), "Callendar-Van Dusen coefficients are told about 0 °C", "write reference_temperature: 0 °C")
 	}
 	s.Callendar = c
+}
+
+func (rd *reader) classes(s *DataSet) {
+	for _, n := range s.Node.Get("tolerance_classes").List() {
+		c := ToleranceClass{Name: n.Get("name").Text()}
+		zero, ok := n.Get("at_zero").Quantity()
+		c.AtZero = zero.Value
+		c.PerDegree, _ = n.Get("per_degree").Number()
+		if lo, hi, ok := n.Get("window").Range(); ok {
+			c.Window = &Window{lo.Value, hi.Value, n.Get("window").Text()}
+			rd.rising(n.Get("window"), *c.Window)
+		}
+		if ok && !(c.AtZero > 0 && c.PerDegree >= 0) {
+			rd.add("tolerance-class-not-positive", n, "the tolerance class "+quote(c.Name)+" is not above zero", "write at_zero and per_degree as the source prints them")
+			continue
+		}
+		s.Classes = append(s.Classes, c)
+	}
 }
 
 func (rd *reader) chord(s *DataSet) {

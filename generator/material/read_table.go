@@ -40,6 +40,7 @@ func (rd *reader) table(s *DataSet) {
 		rd.add("rows-too-few", n.Get("rows"), "a table needs two rows at least", "add rows, or give a resistivity without a table")
 		return
 	}
+	rd.eachRow(n, t)
 	s.Table = t
 	rd.factorAtReference(s, n)
 }
@@ -85,6 +86,26 @@ func (rd *reader) row(t *Table, n *form.Node, temperature, y float64) {
 		rd.add("rows-not-rising", n, "the temperatures do not rise here", "sort the rows, and keep each temperature once")
 	}
 	t.T, t.Y = append(t.T, temperature), append(t.Y, y)
+}
+
+// eachRow reads the ± that holds for every row, as a factor about 1. A ratio is
+// 1 at its reference temperature whatever the rows are worth, so a table of
+// ratios takes none.
+func (rd *reader) eachRow(n *form.Node, t *Table) {
+	at := n.Get("each_row")
+	if at == nil {
+		return
+	}
+	if t.Ratio {
+		rd.add("row-tolerance", at, "a table of R/R takes no ± for each row", "state limits of the resistivity, or tcr_limits")
+		return
+	}
+	q, problem := quantity.Parse(quantity.Ratio, "100 % "+at.Text())
+	if problem != nil || q.Limits == nil && q.Uncertainty == nil {
+		rd.add("row-tolerance", at, quote(at.Text())+" is no ± in per cent", "write for example ± 0.5 % for limits, or ± 0.5 % (k=2) for an uncertainty")
+		return
+	}
+	t.Each = &q
 }
 
 // factorAtReference holds a factor table to its definition: 1 at the

@@ -32,6 +32,7 @@ var tableShape = &form.Shape{Name: "table", Doc: "A printed table. Rows are [tem
 	{Key: "conductivity", Is: form.Text, Doc: "Unit of the values when they are conductivities; %IACS needs quotes.", Example: "MS/m"},
 	{Key: "resistance_ratio", Is: form.Text, Doc: "1 when the values are R/R at the reference temperature.", Example: "1"},
 	{Key: "rows", Required: true, Is: form.Rows, Doc: "The rows as printed.", Example: "[[100, 0.348], [200, 1.046]]"},
+	{Key: "each_row", Is: form.Text, Doc: "± of each row of a table of resistivity or conductivity, as limits or with (k=2) as an uncertainty.", Example: "± 0.5 % (k=2)"},
 	{Key: "interpolate", Is: form.OneOf("linear", "monotone"), Doc: "Between rows: linear (usual for ratios), or a monotone cubic (usual for resistivities).", Example: "linear"},
 }}
 
@@ -58,6 +59,7 @@ var dataSetFields = []form.Field{
 	{Key: "table", Is: form.Mapping(tableShape), Doc: "A printed table instead of coefficients.", Example: "{temperature: K, resistivity: µΩ·cm, rows: [[100, 0.348], [200, 1.046]]}"},
 	{Key: "callendar_van_dusen", Is: form.Mapping(callendarShape), Doc: "Coefficients of a platinum thermometer about 0 °C.", Example: "{A: 3.9083e-3 /°C, B: -5.775e-7 /°C², C: -4.183e-12 /°C⁴}"},
 	{Key: "bloch_gruneisen", Is: form.Mapping(blochShape), Doc: "Residual resistivity and the Bloch-Grüneisen function.", Example: "{residual: 0.002 µΩ·cm, debye_temperature: 328 K, amplitude: 7.81 µΩ·cm, exponent: 5}"},
+	{Key: "tolerance_classes", Is: form.List(form.Mapping(classShape)), Doc: "Tolerance classes of a thermometer, in temperature: ±(at_zero + per_degree·|t|), t in °C.", Example: "[{name: B, at_zero: 0.3 K, per_degree: 0.005}]"},
 	{Key: "points", Is: form.Text, Doc: "CSV of measured points beside the record.", Example: "strip-2026.csv"},
 	{Key: "fit", Is: form.Mapping(fitShape), Doc: "How the points are fitted.", Example: "{reference_temperature: 25 °C, degree: 3}"},
 	{Key: "specimen", Is: form.Mapping(specimenShape), Doc: "Geometry of the measured specimen.", Example: "{between_taps: 200 mm, width: 10 mm, thickness: 1 mm, at: 23 °C}"},
@@ -81,6 +83,13 @@ var blochShape = &form.Shape{Name: "bloch_gruneisen", Doc: "ρ = residual + ampl
 	{Key: "debye_temperature", Required: true, Is: form.Quantity(quantity.Temperature), Doc: "Θ.", Example: "328 K"},
 	{Key: "amplitude", Required: true, Is: form.Quantity(quantity.Resistivity), Doc: "Amplitude.", Example: "7.81 µΩ·cm"},
 	{Key: "exponent", Required: true, Is: form.Integer, Doc: "n: 2, 3 or 5.", Example: "5"},
+}}
+
+var classShape = &form.Shape{Name: "tolerance_classes", Doc: "One tolerance class of a thermometer.", Fields: []form.Field{
+	{Key: "name", Required: true, Is: form.Text, Doc: "Name of the class.", Example: "B"},
+	{Key: "at_zero", Required: true, Is: form.Quantity(quantity.TemperatureDifference), Doc: "Tolerance at 0 °C.", Example: "0.3 K"},
+	{Key: "per_degree", Required: true, Is: form.Number, Doc: "What each degree away from 0 °C adds.", Example: "0.005"},
+	{Key: "window", Is: form.Range(quantity.Temperature), Doc: "Range over which the source states the class.", Example: "-200 °C to 850 °C"},
 }}
 
 var fitShape = &form.Shape{Name: "fit", Doc: "How measured points are fitted.", Fields: []form.Field{

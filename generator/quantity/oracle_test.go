@@ -1,7 +1,6 @@
 package quantity
 
 import (
-	"os"
 	"os/exec"
 	"regexp"
 	"strings"
@@ -32,7 +31,7 @@ var gnuWord = regexp.MustCompile(`[A-Za-z]+[0-9]?`)
 // units), but for prices, temperatures (below) and %IACS, which is a
 // definition (58 MS/m, IEC publication 28).
 func TestAgainstGNUUnits(t *testing.T) {
-	needUnits(t)
+	published.Need(t, "units", "units")
 	for _, k := range Kinds() {
 		for _, u := range Units(k) {
 			if k == Price || k == Temperature || u.Symbol == "%IACS" {
@@ -58,7 +57,7 @@ func TestAgainstGNUUnits(t *testing.T) {
 // TestTemperaturesAgainstGNUUnits: temperatures have their own functions
 // there; degC alone would be a difference.
 func TestTemperaturesAgainstGNUUnits(t *testing.T) {
-	needUnits(t)
+	published.Need(t, "units", "units")
 	for _, x := range []string{"-40", "0", "20", "68", "212", "1000.5"} {
 		for spelled, function := range map[string]string{"°C": "tempC(" + x + ")", "°F": "tempF(" + x + ")", "K": "tempK(" + x + ")"} {
 			if x == "-40" && spelled == "K" {
@@ -72,17 +71,6 @@ func TestTemperaturesAgainstGNUUnits(t *testing.T) {
 				t.Errorf("%s %s is %v K, GNU units says %v", x, spelled, q.Value, want)
 			}
 		}
-	}
-}
-
-// needUnits skips where GNU units is missing, but not in CI.
-func needUnits(t *testing.T) {
-	t.Helper()
-	if _, err := exec.LookPath("units"); err != nil {
-		if os.Getenv("CI") == "true" {
-			t.Fatal("GNU units is missing: install the Debian package units")
-		}
-		t.Skip("GNU units is missing: install the Debian package units")
 	}
 }
 

@@ -107,10 +107,34 @@ func coefficientTable(set *material.DataSet) Grid {
 	if !math.IsNaN(r.ChiSquare) {
 		g.Notes = append(g.Notes, "Weighted by the given uncertainties, covariance unscaled; χ²/ν = "+quantity.Number(r.ChiSquare, 3)+".")
 	}
+	if note := specimenNote(set); note != "" {
+		g.Notes = append(g.Notes, note)
+	}
 	if l := r.LackOfFit; l != nil {
 		g.Notes = append(g.Notes, "Lack of fit: F("+strconv.Itoa(l.Dof1)+", "+strconv.Itoa(l.Dof2)+") = "+quantity.Number(l.F, 3)+", p = "+quantity.Number(l.P, 2)+".")
 	}
 	return g
+}
+
+// specimenNote lets a reader recompute ρ by hand: R of the fit, A/L of the
+// specimen, and how far expansion moved it.
+func specimenNote(set *material.DataSet) string {
+	f := set.Fitted
+	if math.IsNaN(f.Section) || set.Resistivity == nil {
+		return ""
+	}
+	note := "ρ = R·A/L: R at " + quantity.CelsiusText(set.Reference) + " is " + quantity.Number(f.Result.B[0], 7) + quantity.NarrowSpace + "Ω by the fit, A/L of the specimen " +
+		quantity.Number(f.Section*1e3, 6) + quantity.NarrowSpace + "mm"
+	if at, ok := set.Node.Get("specimen").Get("at").Quantity(); ok {
+		note += " at " + quantity.CelsiusText(at.Value)
+		switch {
+		case f.Moved != 1:
+			note += ", times " + quantity.Fixed(f.Moved, 6) + " by expansion to the reference temperature"
+		case at.Value != set.Reference:
+			note += ", not moved to the reference temperature: no expansion recorded"
+		}
+	}
+	return note + "."
 }
 
 func budgetTable(set *material.DataSet) Grid {

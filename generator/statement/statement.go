@@ -29,6 +29,7 @@ type Statement struct {
 	PerMetre       Grid // resistance per metre of stock, or of common sizes
 	PerMetreOf     string
 	Measured       []Measured // one for each data set of measured points
+	Classes        Grid       // tolerance classes of a thermometer
 	Lots           *Lots      // nil when no lots are recorded
 	Limits         []LimitRow // class figures held against the curve
 	NotStated      []string   // "limits of beta", "condition"
@@ -107,6 +108,7 @@ func Of(lib *library.Library, r *material.Record) *Statement {
 	b.properties()
 	b.dataSets()
 	b.measured()
+	b.classes()
 	b.lots()
 	b.figures()
 	s.Sources = SourcesOf(lib, r)

@@ -10,7 +10,11 @@ import (
 // debian maps a program that the checks call to the package that brings it.
 var debian = []struct{ program, pkg string }{
 	{"chromium", "chromium"}, {"pdftotext", "poppler-utils"}, {"units", "units"}, {"java", "default-jre-headless"}, {"npm", "npm"},
+	{"Rscript", "r-base-core"},
 }
+
+// modules maps a Python module that the checks import to its package.
+var modules = []struct{ module, pkg string }{{"scipy", "python3-scipy"}}
 
 // tools installs what is missing. Without the means to install it the tests
 // decide: they skip what cannot run, and fail with CI=true.
@@ -19,6 +23,11 @@ func tools() error {
 	for _, d := range debian {
 		if _, err := exec.LookPath(d.program); err != nil {
 			missing = append(missing, d.pkg)
+		}
+	}
+	for _, m := range modules {
+		if exec.Command("/usr/bin/python3", "-c", "import "+m.module).Run() != nil {
+			missing = append(missing, m.pkg)
 		}
 	}
 	if len(missing) > 0 {
