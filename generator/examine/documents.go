@@ -135,8 +135,10 @@ var bindingOnDraft = Rule{
 	Whole: func(p *Pass) {
 		for _, j := range p.Outcomes {
 			for _, m := range j.Outcome.Materials {
-				if j.Outcome.Binding && m.Record.Status != material.Released {
-					p.Find(j.Document.Source, j.Outcome.Position, quote(j.Outcome.Title)+" is binding and rests on "+m.Material+", which is "+orDraft(m.Record.Status), p.rule.Kind.Mend)
+				for _, r := range restsOn(p.Library, m) {
+					if j.Outcome.Binding && r.Status != material.Released {
+						p.Find(j.Document.Source, j.Outcome.Position, quote(j.Outcome.Title)+" is binding and rests on "+r.ID+", which is "+orDraft(r.Status), p.rule.Kind.Mend)
+					}
 				}
 			}
 		}
@@ -153,12 +155,25 @@ var withdrawnInUse = Rule{
 	Whole: func(p *Pass) {
 		for _, j := range p.Outcomes {
 			for _, m := range j.Outcome.Materials {
-				if m.Record.Status == material.Withdrawn {
-					p.Find(j.Document.Source, j.Outcome.Position, quote(j.Outcome.Title)+" uses "+m.Material+", which is withdrawn: "+m.Record.WithdrawnReason, p.rule.Kind.Mend)
+				for _, r := range restsOn(p.Library, m) {
+					if r.Status == material.Withdrawn {
+						p.Find(j.Document.Source, j.Outcome.Position, quote(j.Outcome.Title)+" uses "+r.ID+", which is withdrawn: "+r.WithdrawnReason, p.rule.Kind.Mend)
+					}
 				}
 			}
 		}
 	},
+}
+
+// restsOn are the records that one answer of a study rests on.
+func restsOn(lib *library.Library, m study.MaterialOutcome) []*material.Record {
+	var list []*material.Record
+	for _, e := range m.Evidence {
+		if r := lib.Material(e.Record); r != nil {
+			list = append(list, r)
+		}
+	}
+	return list
 }
 
 func orDraft(s material.Status) string {

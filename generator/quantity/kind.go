@@ -29,6 +29,8 @@ const (
 	ThermalConductivity   Kind = "thermal conductivity"    // W/(m·K)
 	SpecificHeat          Kind = "specific heat"           // J/(kg·K)
 	SurfaceLoad           Kind = "surface load"            // W/m²
+	FilmCoefficient       Kind = "film coefficient"        // W/(m²·K)
+	ThermalResistance     Kind = "thermal resistance"      // K/W
 	CurrentDensity        Kind = "current density"         // A/m²
 	Stress                Kind = "stress"                  // Pa
 	Length                Kind = "length"                  // m

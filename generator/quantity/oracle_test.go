@@ -21,7 +21,7 @@ var gnuWords = map[string]string{
 var gnuSI = map[Kind]string{
 	Resistivity: "ohm m", Conductivity: "siemens/m", MassResistivity: "ohm kg/m^2", SheetResistance: "ohm", ResistancePerLength: "ohm/m", Resistance: "ohm",
 	Coefficient1: "1/K", Coefficient2: "1/K^2", Coefficient3: "1/K^3", Coefficient4: "1/K^4", TemperatureDifference: "K", Density: "kg/m^3", EMF: "V/K",
-	ThermalConductivity: "W/m K", SpecificHeat: "J/kg K", SurfaceLoad: "W/m^2", CurrentDensity: "A/m^2", Stress: "Pa", Length: "m", Area: "m^2", Mass: "kg",
+	ThermalConductivity: "W/m K", SpecificHeat: "J/kg K", SurfaceLoad: "W/m^2", FilmCoefficient: "W/m^2 K", ThermalResistance: "K/W", CurrentDensity: "A/m^2", Stress: "Pa", Length: "m", Area: "m^2", Mass: "kg",
 	Current: "A", Voltage: "V", Power: "W", Time: "s", Ratio: "1",
 }
 

@@ -109,6 +109,8 @@ var table = []struct {
 	{SurfaceLoad, []row{
 		{"W/cm²", "W/cm2", "W/cm2", 1e4, 0, ""}, {"W/m²", "W/m2", "W/m2", 1, 0, ""}, {"W/in²", "W/in2", "W/[in_i]2", 1 / (inch * inch), 0, "W/sqin|W/sq in"},
 	}},
+	{FilmCoefficient, []row{{"W/(m²·K)", "W/(m2 K)", "W/(m2.K)", 1, 0, "W/m²K|W/m2K|W/m²/K|W·m⁻²·K⁻¹|W/(m²·°C)"}}},
+	{ThermalResistance, []row{{"K/W", "K/W", "K/W", 1, 0, "°C/W|degC/W"}}},
 	{CurrentDensity, []row{{"A/mm²", "A/mm2", "A/mm2", 1e6, 0, ""}, {"A/m²", "A/m2", "A/m2", 1, 0, ""}, {"A/cm²", "A/cm2", "A/cm2", 1e4, 0, ""}}},
 	{Stress, []row{{"MPa", "MPa", "MPa", 1e6, 0, "N/mm²|N/mm2"}, {"GPa", "GPa", "GPa", 1e9, 0, ""}, {"Pa", "Pa", "Pa", 1, 0, ""}, {"ksi", "ksi", "k[psi]", 1e3 * psi, 0, ""}, {"psi", "psi", "[psi]", psi, 0, ""}}},
 	{Length, []row{

@@ -10,7 +10,6 @@ import (
 
 	"ohmfolio/generator/figure"
 	"ohmfolio/generator/library"
-	"ohmfolio/generator/quantity"
 	"ohmfolio/generator/study"
 )
 
@@ -64,11 +63,7 @@ func (s *site) short(id string) string {
 }
 
 func requirementText(r study.Requirement) string {
-	unit := "ppm"
-	if r.Name == "box" {
-		unit = "ppm/K"
-	}
-	return strings.ReplaceAll(r.Name, "_", " ") + " within " + quantity.Number(r.Limit, 4) + quantity.NarrowSpace + unit
+	return strings.ReplaceAll(r.Name, "_", " ") + " within " + r.Bound
 }
 
 // chartFigure gives each series an ink and a dash; after four inks the dashes

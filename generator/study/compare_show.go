@@ -1,116 +1,59 @@
 package study
 
 import (
+	"math"
+
 	"ohmfolio/generator/material"
 	"ohmfolio/generator/quantity"
 )
 
-// column is one column of a table.
-type column struct{ name, head string }
-
-// compareColumns of the table of every measure: number's name and head.
-var compareColumns = []column{
-	{rankRho, "ρ"}, {"slope", "slope, ppm/K"}, {"chord_cold", "chord cold, ppm/K"}, {"chord_hot", "chord hot, ppm/K"},
-	{rankBox, "box, ppm/K"}, {"change_least", "least change"}, {"change_most", "greatest rise"}, {rankChange, "greatest change"},
-	{"greatest_at", "at, °C"},
-}
-
 // tables makes one table for the whole window and one for the parts.
-func (c *comparison) tables() {
-	whole := Table{Caption: "Every measure over " + windowText(c.lo, c.hi) + ", counted from " + quantity.CelsiusText(c.reference), Heads: c.heads(false)}
-	part := Table{Caption: "Told over part of the window only", Heads: c.heads(true)}
-	for _, m := range c.out.Materials {
-		row := c.row(m)
-		if m.Partly == "" {
-			whole.Rows, whole.Links = append(whole.Rows, row), append(whole.Links, m.Material)
+func (c *comparison) tables(answers []*answer) {
+	names := []string{"resistivity", "slope", "chord_cold", "chord_hot", "box", "change_least", "change_most", "change_cold", "change_hot", "greatest_change", "greatest_at", "deviation"}
+	c.out.Tables = append(c.out.Tables, wholeAndParts(c.work, "Every measure over "+windowText(c.lo, c.hi)+", counted from "+quantity.CelsiusText(c.reference), answers, names...)...)
+}
+
+// wholeAndParts makes a table of the answers over the whole window, and one of
+// those over a part of it, with the part judged.
+func wholeAndParts(w *work, caption string, answers []*answer, names ...string) []Table {
+	var whole, parts []*answer
+	for _, a := range answers {
+		if a.Partly == "" {
+			whole = append(whole, a)
 		} else {
-			part.Rows, part.Links = append(part.Rows, append(row, m.Partly)), append(part.Links, m.Material)
+			parts = append(parts, a)
 		}
 	}
-	c.out.Tables = append(c.out.Tables, whole)
-	if len(part.Rows) > 0 {
-		c.out.Tables = append(c.out.Tables, part)
+	list := []Table{w.numbersTable(caption, whole, names...)}
+	if len(parts) == 0 {
+		return list
 	}
-}
-
-// columns leaves out a chord that no material has, because the reference
-// temperature stands at that edge of the window.
-func (c *comparison) columns() []column {
-	var list []column
-	for _, col := range compareColumns {
-		there := col.name != "chord_cold" && col.name != "chord_hot"
-		for _, m := range c.out.Materials {
-			_, has := m.Numbers[col.name]
-			there = there || has
-		}
-		if there {
-			list = append(list, col)
-		}
+	t := w.numbersTable("Told over part of the window only", parts, names...)
+	t.Heads = append(t.Heads, "judged over")
+	for i, a := range parts {
+		t.Rows[i] = append(t.Rows[i], a.Partly)
 	}
-	return list
-}
-
-func (c *comparison) heads(part bool) []string {
-	heads := []string{"Material"}
-	for _, col := range c.columns() {
-		if col.name == rankRho {
-			heads = append(heads, "ρ, "+c.houseUnit().Symbol)
-			continue
-		}
-		heads = append(heads, col.head)
-	}
-	if len(c.bounds()) > 0 {
-		heads = append(heads, "verdict")
-	}
-	if part {
-		heads = append(heads, "judged over")
-	}
-	return heads
-}
-
-func (c *comparison) row(m MaterialOutcome) []string {
-	row := []string{m.Record.Name}
-	for _, col := range c.columns() {
-		row = append(row, c.cell(m, col.name))
-	}
-	if len(c.bounds()) > 0 {
-		row = append(row, m.Verdict.Shown())
-	}
-	return row
-}
-
-func (c *comparison) cell(m MaterialOutcome, name string) string {
-	if n, ok := m.Numbers[name]; ok {
-		return n.Text
-	}
-	switch {
-	case name == rankRho:
-		return "no resistivity"
-	case m.Record.Adopted == nil || m.Record.Adopted.Ratio == nil:
-		return "no coefficient"
-	case !m.Record.Adopted.Ratio.HasNominal():
-		return "no nominal"
-	case name == "chord_cold" || name == "chord_hot":
-		return "none on this side"
-	}
-	return "cannot be told"
+	return append(list, t)
 }
 
 // chart draws what the block asked to see, each curve over what its data
 // cover of the window.
-func (c *comparison) chart() {
+func (c *comparison) chart(answers []*answer) {
 	chart := Chart{Title: c.out.Title, XTitle: "temperature in °C",
 		Description: "Curves of the materials over " + windowText(c.lo, c.hi) + "; the table holds the same numbers."}
+	unit := changeUnit(answers)
 	switch c.show {
 	case showRho:
-		chart.YTitle = "ρ in " + c.houseUnit().Symbol
+		chart.YTitle = "ρ in " + c.houseResistivity().Symbol
 	case showRatio:
 		chart.YTitle = "R/R at " + quantity.CelsiusText(c.reference)
+	case showDeviation:
+		chart.YTitle = "R/R from that of " + c.baseline.ShortName() + " in " + unit
 	default:
-		chart.YTitle = "change of R from " + quantity.CelsiusText(c.reference) + " in " + c.changeUnit()
+		chart.YTitle = "change of R from " + quantity.CelsiusText(c.reference) + " in " + unit
 	}
-	for _, m := range c.out.Materials {
-		if s, ok := c.series(m); ok {
+	for _, a := range answers {
+		if s, ok := c.series(a.Record, unit); ok {
 			chart.Series = append(chart.Series, s)
 		}
 	}
@@ -121,9 +64,9 @@ func (c *comparison) chart() {
 
 // changeUnit is one unit for the whole axis: per cent once any change
 // reaches one per cent.
-func (c *comparison) changeUnit() string {
-	for _, m := range c.out.Materials {
-		if n, ok := m.Numbers[rankChange]; ok && n.Value != nil && (*n.Value >= 10000 || *n.Value <= -10000) {
+func changeUnit(answers []*answer) string {
+	for _, a := range answers {
+		if n, ok := a.spans["greatest_change"]; ok && math.Abs(n.v) >= 0.01 {
 			return "%"
 		}
 	}
@@ -133,22 +76,42 @@ func (c *comparison) changeUnit() string {
 // seriesPoints a curve: enough for a smooth line at print size.
 const seriesPoints = 160
 
-func (c *comparison) series(m MaterialOutcome) (Series, bool) {
-	set := m.Record.Adopted
+func (c *comparison) series(r *material.Record, unit string) (Series, bool) {
+	set := r.Adopted
 	if set == nil {
 		return Series{}, false
 	}
 	read := material.Reading{Told: set.Ratio, Ratio: true, Reference: c.reference}
-	if c.show == showRho {
-		read = material.Reading{Told: set.Rho}
+	var convert func(float64) float64
+	switch c.show {
+	case showRho:
+		read, convert = material.Reading{Told: set.Rho}, c.houseResistivity().FromSI
+	case showRatio:
+		convert = func(x float64) float64 { return x }
+	case showDeviation:
+		return c.deviationSeries(r, perUnit(unit))
+	default:
+		convert = perUnit(unit)
 	}
-	convert := c.conversion()
-	s := Series{Label: m.Record.ShortName()}
-	lo, hi := max(c.lo, set.Valid.Lo), min(c.hi, set.Valid.Hi)
-	for i := 0; i < seriesPoints; i++ {
-		t := lo + float64((hi-lo)*float64(i)/(seriesPoints-1))
-		v, ok := read.At(min(t, hi))
-		l, limited := read.Limits(min(t, hi))
+	return seriesOf(r.ShortName(), set, read, c.lo, c.hi, convert)
+}
+
+// perUnit turns a ratio into a change in % or ppm.
+func perUnit(unit string) func(float64) float64 {
+	if unit == "%" {
+		return func(x float64) float64 { return float64((x - 1) * 100) }
+	}
+	return func(x float64) float64 { return float64((x - 1) * 1e6) }
+}
+
+// seriesOf reads a curve with its band over what the data cover of [lo, hi].
+func seriesOf(label string, set *material.DataSet, read material.Reading, lo, hi float64, convert func(float64) float64) (Series, bool) {
+	s := Series{Label: label}
+	lo, hi = max(lo, set.Valid.Lo), min(hi, set.Valid.Hi)
+	for i := range seriesPoints {
+		t := min(lo+float64((hi-lo)*float64(i)/(seriesPoints-1)), hi)
+		v, ok := read.At(t)
+		l, limited := read.Limits(t)
 		if !ok && !limited {
 			continue
 		}
@@ -166,14 +129,13 @@ func (c *comparison) series(m MaterialOutcome) (Series, bool) {
 	return s, len(s.X) > 1 && (len(s.Y) == len(s.X) || s.Lower != nil)
 }
 
-func (c *comparison) conversion() func(float64) float64 {
-	switch {
-	case c.show == showRho:
-		return c.houseUnit().FromSI
-	case c.show == showRatio:
-		return func(x float64) float64 { return x }
-	case c.changeUnit() == "%":
-		return func(x float64) float64 { return float64((x - 1) * 100) }
+func (c *comparison) deviationSeries(r *material.Record, convert func(float64) float64) (Series, bool) {
+	s := Series{Label: r.ShortName()}
+	for i := range seriesPoints {
+		t := c.lo + float64((c.hi-c.lo)*float64(i)/(seriesPoints-1))
+		if d, ok := c.deviationAt(r.Adopted, t); ok {
+			s.X, s.Y = append(s.X, t-quantity.ZeroCelsius), append(s.Y, convert(1+d))
+		}
 	}
-	return func(x float64) float64 { return float64((x - 1) * 1e6) }
+	return s, len(s.X) > 1
 }

@@ -10,13 +10,19 @@ import (
 )
 
 // kinds is the one list of studies, sorted by name.
-var kinds = []Kind{compareKind}
+var kinds = []Kind{compareKind.whole()}
 
 // Kinds returns the studies in order of their names.
 func Kinds() []Kind { return append([]Kind{}, kinds...) }
 
 // FindingKinds documents what reading a study block may find.
 var FindingKinds = []place.Kind{
+	{
+		Code: "baseline-missing", Severity: place.Error, Title: "A deviation from nothing",
+		Explanation: "A comparison that shows deviation tells how far each material lies from one of them.",
+		Trigger:     trigger("materials: [copper]\nwindow: 0 °C to 100 °C\nshow: deviation"),
+		Mend:        "add baseline: with the ID of a material",
+	},
 	{
 		Code: "study-material-unknown", Severity: place.Error, Title: "A study names a material that is not there",
 		Explanation: "A comparison can only tell about records of this reference. Earlier IDs lead to the record that replaced them.",
@@ -74,13 +80,15 @@ func Run(lib *library.Library, block words.Study) (*Outcome, []place.Finding) {
 		return nil, findings
 	}
 	report.Findings = findings
-	outcome := kind.Run(&Input{Library: lib, Block: node, Report: report})
-	if outcome == nil {
+	w := &work{lib: lib, block: node, report: report, kind: kind}
+	w.out = &Outcome{Study: kind.Name, Title: w.text("title", kind.Title), Binding: node.Get("binding").Yes(), Position: block.Position,
+		Materials: []MaterialOutcome{}, Ranking: []string{}, Tables: []Table{}, Notes: []string{}}
+	w.parameters()
+	kind.Run(w)
+	if w.failed {
 		return nil, report.Findings
 	}
-	outcome.Study = kind.Name
-	outcome.Position = block.Position
-	return outcome, report.Findings
+	return w.out, report.Findings
 }
 
 func find(name string) (Kind, bool) {

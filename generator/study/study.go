@@ -4,27 +4,9 @@
 package study
 
 import (
-	"ohmfolio/generator/form"
-	"ohmfolio/generator/library"
 	"ohmfolio/generator/material"
 	"ohmfolio/generator/place"
 )
-
-// A Kind of study: its name in a block, its parameters, and how it runs.
-type Kind struct {
-	Name  string
-	Title string
-	Doc   string
-	Shape *form.Shape
-	Run   func(in *Input) *Outcome
-}
-
-// Input is what a study works from.
-type Input struct {
-	Library *library.Library
-	Block   *form.Node // the checked parameters
-	Report  *place.List
-}
 
 // Verdict of a requirement or a material (definitions: verdicts).
 type Verdict string
@@ -54,6 +36,7 @@ type Outcome struct {
 	Parameters []Parameter       `json:"parameters"`
 	Materials  []MaterialOutcome `json:"materials"`
 	Ranking    []string          `json:"ranking"`
+	Notes      []string          `json:"notes"` // assumptions, and what is left out
 	Cautions   []string          `json:"cautions"`
 	Charts     []Chart           `json:"-"`
 	Tables     []Table           `json:"tables"`
@@ -69,6 +52,7 @@ type Parameter struct {
 // MaterialOutcome is what a study says of one material.
 type MaterialOutcome struct {
 	Material     string            `json:"material"`
+	Size         string            `json:"size,omitempty"` // where one material is judged in several sizes
 	Verdict      Verdict           `json:"verdict"`
 	Reasons      []string          `json:"reasons"`
 	Requirements []Requirement     `json:"requirements"`
@@ -77,13 +61,16 @@ type MaterialOutcome struct {
 	Warnings     []string          `json:"warnings"`
 	Evidence     []Evidence        `json:"evidence"`
 
-	Record *material.Record `json:"-"`
+	Name   string           `json:"-"` // as a table shows it
+	Record *material.Record `json:"-"` // nil when the answer is about several
 	Partly string           `json:"-"` // the part of the window judged, "" when whole
 }
 
 // Requirement is one bound and how a material stands to it.
 type Requirement struct {
 	Name    string   `json:"name"`
+	Unit    string   `json:"unit"`
+	Bound   string   `json:"bound"` // as it was written
 	Limit   float64  `json:"limit"`
 	Worst   *float64 `json:"worst"`
 	AtC     *float64 `json:"at_C"`
@@ -97,10 +84,24 @@ type Number struct {
 	Unit  string   `json:"unit"`
 	Lower *float64 `json:"lower"`
 	Upper *float64 `json:"upper"`
-	Kind  string   `json:"kind"` // "limits", "uncertainty", "nominal"
+	Kind  string   `json:"kind"` // "limits", "partial limits", "nominal", "exact"
 	Text  string   `json:"-"`    // as pages print it
+}
 
-	sure float64 // magnitude that every curve within the limits reaches somewhere
+// Label names the answer in a table: the material, with its size.
+func (m MaterialOutcome) Label() string {
+	if m.Size != "" {
+		return m.Name + ", " + m.Size
+	}
+	return m.Name
+}
+
+// Ranked names the answer in a ranking: the ID, with its size.
+func (m MaterialOutcome) Ranked() string {
+	if m.Size != "" {
+		return m.Material + ", " + m.Size
+	}
+	return m.Material
 }
 
 // Evidence names the record a result rests on.

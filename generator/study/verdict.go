@@ -6,81 +6,96 @@ import (
 	"ohmfolio/generator/quantity"
 )
 
-// bound is what is required of one number: its magnitude must not exceed
-// Limit (in the number's own unit).
-type bound struct {
-	name  string
-	limit float64
-}
-
-// requireBounds reads the bounds of a comparison in the units of its numbers.
-func (c *comparison) bounds() []bound {
-	var list []bound
-	node := c.in.Block.Get("require")
-	for _, name := range []string{rankChange, rankBox} {
-		if q, ok := node.Get(name).Quantity(); ok {
-			list = append(list, bound{name, quantity.Round12(q.Value * 1e6)})
+// judge holds the numbers against what is required (definitions: verdicts).
+func (a *answer) judge() {
+	require := a.w.block.Get("require")
+	for i, name := range require.Keys() {
+		bound, ok := require.List()[i].Quantity()
+		if !ok {
+			continue
 		}
-	}
-	return list
-}
-
-// require judges one material (definitions: verdicts). Without limits on the
-// coefficients a bound can only hold on nominal values.
-func (c *comparison) require(m *MaterialOutcome) {
-	bounds := c.bounds()
-	if len(bounds) == 0 {
-		return
-	}
-	m.Verdict = Holds
-	for _, b := range bounds {
-		r := judgeMagnitude(b, m.Numbers[b.name])
-		if m.Partly != "" && r.Verdict != Fails {
-			r.Verdict = CannotBeTold
+		r := a.requirement(name, bound)
+		if len(a.Requirements) == 0 {
+			a.Verdict = Holds
 		}
-		if at, ok := m.Numbers["greatest_at"]; ok && b.name == rankChange {
-			r.AtC = at.Value
-		}
-		m.Requirements = append(m.Requirements, r)
-		m.Verdict = worse(m.Verdict, r.Verdict)
+		a.Requirements = append(a.Requirements, r)
+		a.Verdict = worse(a.Verdict, r.Verdict)
 		if r.Verdict != Holds {
-			m.Reasons = append(m.Reasons, inWords(b.name)+" "+string(r.Verdict)+": "+m.Numbers[b.name].Text+" against "+quantity.Number(b.limit, 4)+" "+m.Numbers[b.name].Unit)
+			a.reason(inWords(name) + " " + string(r.Verdict) + ": " + a.told(name) + " against " + bound.Text)
 		}
 	}
 }
 
-// judgeMagnitude holds |n| against a bound. margin = (limit − worst)/limit.
-// A number fails for certain when even the best case is beyond the bound.
-func judgeMagnitude(b bound, n Number) Requirement {
-	r := Requirement{Name: b.name, Limit: b.limit, Verdict: CannotBeTold}
-	worst, best, ok := magnitudes(n)
+func (a *answer) told(name string) string {
+	n, ok := a.Numbers[name]
 	if !ok {
-		return r
+		return "no value"
 	}
-	r.Worst, r.Margin = number(worst), number((b.limit-worst)/b.limit)
-	switch {
-	case best > b.limit:
-		r.Verdict = Fails
-	case worst > b.limit:
-	case n.Kind == "nominal":
-		r.Verdict = HoldsNominally
-	default:
-		r.Verdict = Holds
+	doc := a.w.kind.number(name)
+	if doc.Unit == "" || doc.Unit == "ppm" {
+		return n.Text
+	}
+	return n.Text + quantity.NarrowSpace + n.Unit
+}
+
+func (a *answer) requirement(name string, bound quantity.Quantity) Requirement {
+	doc := a.w.kind.number(name)
+	s, known := a.spans[name]
+	r := judged(doc, bound, s, known)
+	if a.Partly != "" && r.Verdict != Fails {
+		r.Verdict = CannotBeTold
+	}
+	if at, ok := a.at[name]; ok && known {
+		r.AtC = number(at - quantity.ZeroCelsius)
 	}
 	return r
 }
 
-// magnitudes are the largest |n| that the limits allow, and the one that no
-// curve within the limits stays under.
-func magnitudes(n Number) (worst, best float64, ok bool) {
-	if n.Value != nil {
-		worst, best, ok = math.Abs(*n.Value), math.Abs(*n.Value), true
+// judged holds one number against one bound. A plain value bounds the
+// magnitude; limits bound the value itself. Of two bounds the tighter one is
+// told. It fails for certain when even the best case is beyond the bound.
+func judged(doc NumberDoc, bound quantity.Quantity, s span, known bool) Requirement {
+	lower, upper := math.Inf(-1), math.Inf(1)
+	if bound.Limits != nil {
+		lower, upper = bound.Limits.Lower, bound.Limits.Upper
+	} else {
+		upper = math.Abs(bound.Value)
+		s = s.magnitude()
 	}
-	if n.Lower != nil && n.Upper != nil {
-		worst, ok = math.Max(math.Abs(*n.Lower), math.Abs(*n.Upper)), true
-		best = n.sure
+	u := doc.unit()
+	in := func(si float64) float64 { return quantity.Round12(u.FromSI(si)) }
+	r := Requirement{Name: doc.Name, Unit: u.Symbol, Bound: bound.Text, Verdict: CannotBeTold, Limit: in(upper)}
+	if math.IsInf(upper, 1) {
+		r.Limit = in(lower)
 	}
-	return worst, best, ok
+	if !known {
+		return r
+	}
+	margin := math.Inf(1)
+	verdict := Holds
+	take := func(limit, worst, m float64, beyond, sureBeyond bool) {
+		if m < margin {
+			margin, r.Limit, r.Worst, r.Margin = m, limit, number(worst), number(m)
+		}
+		switch {
+		case sureBeyond:
+			verdict = worse(verdict, Fails)
+		case beyond:
+			verdict = worse(verdict, CannotBeTold)
+		case !s.banded:
+			verdict = worse(verdict, HoldsNominally)
+		}
+	}
+	if !math.IsInf(upper, 1) {
+		limit, worst, best := in(upper), in(s.hi), in(s.lo)
+		take(limit, worst, (limit-worst)/math.Abs(limit), worst > limit, best > limit)
+	}
+	if !math.IsInf(lower, -1) {
+		limit, worst, best := in(lower), in(s.lo), in(s.hi)
+		take(limit, worst, (worst-limit)/math.Abs(limit), worst < limit, best < limit)
+	}
+	r.Verdict = verdict
+	return r
 }
 
 // severity orders verdicts from best to worst.

@@ -8,25 +8,6 @@ import (
 	"ohmfolio/generator/quantity"
 )
 
-// interval grows to hold every value added.
-type interval struct{ lo, hi, sure float64 }
-
-func newInterval() *interval { return &interval{lo: math.Inf(1), hi: math.Inf(-1)} }
-
-func (i *interval) add(x float64) { i.lo, i.hi = math.Min(i.lo, x), math.Max(i.hi, x) }
-
-// into writes the interval beside the number called name as worst case of
-// the stated limits.
-// Without a nominal value the text tells the interval.
-func (i *interval) into(numbers map[string]Number, name, unit, text string) {
-	n, there := numbers[name]
-	if !there {
-		n = Number{Unit: unit, Text: text}
-	}
-	n.Lower, n.Upper, n.Kind, n.sure = number(i.lo), number(i.hi), "limits", i.sure
-	numbers[name] = n
-}
-
 // number is x to 12 significant digits, nil when it is not finite.
 func number(x float64) *float64 {
 	if math.IsNaN(x) || math.IsInf(x, 0) {

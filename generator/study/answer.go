@@ -1,0 +1,193 @@
+package study
+
+import (
+	"math"
+	"sort"
+
+	"ohmfolio/generator/material"
+	"ohmfolio/generator/quantity"
+)
+
+// answer is what a study says of one material, as it grows.
+type answer struct {
+	MaterialOutcome
+	w     *work
+	spans map[string]span
+	at    map[string]float64 // K: where the worst case of a number lies
+	rank  float64            // what it is ordered by; NaN is last
+}
+
+// about begins the answer of one material.
+func (w *work) about(r *material.Record) *answer {
+	a := &answer{w: w, spans: map[string]span{}, at: map[string]float64{}, rank: math.NaN()}
+	a.MaterialOutcome = MaterialOutcome{Material: r.ID, Record: r, Name: r.Name, Reasons: []string{}, Requirements: []Requirement{},
+		Numbers: map[string]Number{}, Tables: []Table{}, Warnings: []string{}, Evidence: []Evidence{evidenceOf(w.lib, r)}}
+	warnState(&a.MaterialOutcome, r)
+	return a
+}
+
+// reason says why something cannot be told or does not hold, each once.
+func (a *answer) reason(text string) {
+	for _, r := range a.Reasons {
+		if r == text {
+			return
+		}
+	}
+	a.Reasons = append(a.Reasons, text)
+}
+
+// cannot tells that what it names is missing: "no thermal conductivity".
+func (a *answer) cannot(why string) { a.reason("cannot be told: " + why) }
+
+func (a *answer) warn(text string) { a.Warnings = append(a.Warnings, text) }
+
+// tell adds a named number; one that is not known is left out.
+func (a *answer) tell(name string, s span) {
+	doc := a.w.kind.number(name)
+	if !s.known() {
+		return
+	}
+	u := doc.unit()
+	if doc.Kind == quantity.Resistivity {
+		u = a.w.houseResistivity()
+	}
+	n := Number{Unit: u.Symbol, Kind: "nominal", Text: textOf(doc, u, s)}
+	if !math.IsNaN(s.v) {
+		n.Value = number(u.FromSI(s.v))
+	}
+	switch {
+	case s.wide():
+		n.Lower, n.Upper, n.Kind = number(u.FromSI(s.lo)), number(u.FromSI(s.hi)), "limits"
+		if !s.banded {
+			n.Kind = "partial limits"
+		}
+	case s.banded:
+		n.Kind = "exact"
+	}
+	a.Numbers[name], a.spans[name] = n, s
+}
+
+// tellAt adds a number with the temperature where it lies.
+func (a *answer) tellAt(name string, s span, kelvin float64) {
+	a.tell(name, s)
+	a.at[name] = kelvin
+}
+
+// textOf prints a number without its unit where the head of a column has one.
+func textOf(doc NumberDoc, u quantity.Unit, s span) string {
+	show := func(si float64) string { return oneText(doc, u, si) }
+	switch {
+	case math.IsNaN(s.v):
+		return show(s.lo) + " to " + show(s.hi)
+	case s.wide() && show(s.lo) != show(s.hi):
+		return show(s.v) + " (" + show(s.lo) + " to " + show(s.hi) + ")"
+	}
+	return show(s.v)
+}
+
+func oneText(doc NumberDoc, u quantity.Unit, si float64) string {
+	switch {
+	case math.IsInf(si, 1):
+		return "without limit"
+	case doc.Kind == quantity.Ratio && doc.Unit == "ppm":
+		return quantity.ChangeText(si)
+	case doc.Kind == quantity.Coefficient1:
+		return quantity.PPMText(si)
+	case doc.Kind == quantity.Temperature:
+		return quantity.Fixed(u.FromSI(si), 1)
+	}
+	return quantity.Number(u.FromSI(si), max(3, doc.Digits))
+}
+
+// head of the column of a number: its words and its unit, which changes print
+// for themselves.
+func (w *work) head(name string) string {
+	doc := w.kind.number(name)
+	head := doc.Head
+	if head == "" {
+		head = inWords(name)
+	}
+	switch {
+	case doc.Kind == quantity.Resistivity:
+		return head + ", " + w.houseResistivity().Symbol
+	case doc.Unit == "" || doc.Kind == quantity.Ratio && doc.Unit == "ppm":
+		return head
+	}
+	return head + ", " + doc.Unit
+}
+
+// numbersTable has one row a material and one column a number; a column that
+// nobody can fill is left out.
+func (w *work) numbersTable(caption string, answers []*answer, names ...string) Table {
+	t := Table{Caption: caption, Heads: []string{"Material"}}
+	var kept []string
+	for _, name := range names {
+		for _, a := range answers {
+			if _, ok := a.Numbers[name]; ok {
+				kept = append(kept, name)
+				t.Heads = append(t.Heads, w.head(name))
+				break
+			}
+		}
+	}
+	verdicts := w.has("require")
+	if verdicts {
+		t.Heads = append(t.Heads, "verdict")
+	}
+	for _, a := range answers {
+		row := []string{a.Label()}
+		for _, name := range kept {
+			row = append(row, a.cell(name))
+		}
+		if verdicts {
+			row = append(row, a.Verdict.Shown())
+		}
+		t.Rows, t.Links = append(t.Rows, row), append(t.Links, a.Material)
+	}
+	return t
+}
+
+func (a *answer) cell(name string) string {
+	if n, ok := a.Numbers[name]; ok {
+		return n.Text
+	}
+	return string(CannotBeTold)
+}
+
+// finish judges every answer, orders them, and puts them into the outcome.
+// Better verdicts do not come first: the order is by rank alone, whole windows
+// before parts.
+func (w *work) finish(answers []*answer) {
+	for _, a := range answers {
+		a.judge()
+	}
+	sort.SliceStable(answers, func(i, j int) bool {
+		a, b := answers[i], answers[j]
+		switch {
+		case (a.Partly == "") != (b.Partly == ""):
+			return a.Partly == ""
+		case math.IsNaN(a.rank) != math.IsNaN(b.rank):
+			return !math.IsNaN(a.rank)
+		case a.rank != b.rank && !math.IsNaN(a.rank):
+			return a.rank < b.rank
+		case a.Material != b.Material:
+			return a.Material < b.Material
+		}
+		return false
+	})
+	for _, a := range answers {
+		w.out.Materials = append(w.out.Materials, a.MaterialOutcome)
+		if a.Partly == "" && !math.IsNaN(a.rank) && !containsText(w.out.Ranking, a.Label()) {
+			w.out.Ranking = append(w.out.Ranking, a.Ranked())
+		}
+	}
+}
+
+func containsText(list []string, s string) bool {
+	for _, x := range list {
+		if x == s {
+			return true
+		}
+	}
+	return false
+}
