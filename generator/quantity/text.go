@@ -79,6 +79,16 @@ func Round12(x float64) float64 {
 	if x == 0 || math.IsNaN(x) || math.IsInf(x, 0) {
 		return x
 	}
+	// A 12-digit integer over an exact power of ten is the float nearest to its
+	// decimal, and quicker than printing and reading it.
+	if k := 11 - int(math.Floor(math.Log10(math.Abs(x)))); k >= 0 && k < len(exactTens) {
+		if n := math.Round(float64(x * exactTens[k])); math.Abs(n) < 1e12 && math.Abs(n) >= 1e11 {
+			return n / exactTens[k]
+		}
+	}
 	r, _ := strconv.ParseFloat(strconv.FormatFloat(x, 'g', 12, 64), 64)
 	return r
 }
+
+// exactTens are the powers of ten that a float64 holds exactly.
+var exactTens = [...]float64{1, 1e1, 1e2, 1e3, 1e4, 1e5, 1e6, 1e7, 1e8, 1e9, 1e10, 1e11, 1e12, 1e13, 1e14, 1e15, 1e16, 1e17, 1e18, 1e19, 1e20, 1e21, 1e22}

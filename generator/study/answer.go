@@ -15,13 +15,16 @@ type answer struct {
 	spans map[string]span
 	at    map[string]float64 // K: where the worst case of a number lies
 	rank  float64            // what it is ordered by; NaN is last
+
+	judged bool
+	terms  []term // of an error budget
 }
 
 // about begins the answer of one material.
 func (w *work) about(r *material.Record) *answer {
-	a := &answer{w: w, spans: map[string]span{}, at: map[string]float64{}, rank: math.NaN()}
+	a := &answer{w: w, spans: make(map[string]span, len(w.kind.Numbers)), at: map[string]float64{}, rank: math.NaN()}
 	a.MaterialOutcome = MaterialOutcome{Material: r.ID, Record: r, Name: r.Name, Reasons: []string{}, Requirements: []Requirement{},
-		Numbers: map[string]Number{}, Tables: []Table{}, Warnings: []string{}, Evidence: []Evidence{evidenceOf(w.lib, r)}}
+		Numbers: make(map[string]Number, len(w.kind.Numbers)), Tables: []Table{}, Warnings: []string{}, Evidence: []Evidence{evidenceOf(w.lib, r)}}
 	warnState(&a.MaterialOutcome, r)
 	return a
 }
@@ -47,11 +50,8 @@ func (a *answer) tell(name string, s span) {
 	if !s.known() {
 		return
 	}
-	u := doc.unit()
-	if doc.Kind == quantity.Resistivity {
-		u = a.w.houseResistivity()
-	}
-	n := Number{Unit: u.Symbol, Kind: "nominal", Text: textOf(doc, u, s)}
+	u := a.w.unit(doc)
+	n := Number{Unit: u.Symbol, Kind: "nominal"}
 	if !math.IsNaN(s.v) {
 		n.Value = number(u.FromSI(s.v))
 	}
@@ -73,8 +73,43 @@ func (a *answer) tellAt(name string, s span, kelvin float64) {
 	a.at[name] = kelvin
 }
 
-// textOf prints a number without its unit where the head of a column has one.
-func textOf(doc NumberDoc, u quantity.Unit, s span) string {
+// property is a property of the material with its limits; false when the
+// record has none.
+func (a *answer) property(name string) (span, bool) {
+	p := a.Record.Property(name)
+	if p == nil {
+		return unknown(), false
+	}
+	q := p.Value
+	switch {
+	case q.Limits != nil && p.Class != material.Typical && math.IsInf(q.Limits.Lower, -1):
+		// "at most 1 µV/K" bounds the magnitude.
+		return span{v: math.NaN(), lo: -q.Limits.Upper, hi: q.Limits.Upper, banded: true, sure: math.NaN()}, true
+	case q.Limits != nil && p.Class != material.Typical && !math.IsInf(q.Limits.Upper, 1):
+		return given(q), true
+	case q.HasValue():
+		return nominal(q.Value), true
+	}
+	return unknown(), false
+}
+
+// unit is the one that a number is told in: the house unit of resistivity.
+func (w *work) unit(doc *NumberDoc) quantity.Unit {
+	if doc.Kind == quantity.Resistivity {
+		return w.houseResistivity()
+	}
+	return w.kind.index[doc.Name].unit
+}
+
+// text prints a number without its unit where the head of a column has one;
+// "" when it is not told.
+func (a *answer) text(name string) string {
+	s, ok := a.spans[name]
+	if !ok {
+		return ""
+	}
+	doc := a.w.kind.number(name)
+	u := a.w.unit(doc)
 	show := func(si float64) string { return oneText(doc, u, si) }
 	switch {
 	case math.IsNaN(s.v):
@@ -85,7 +120,7 @@ func textOf(doc NumberDoc, u quantity.Unit, s span) string {
 	return show(s.v)
 }
 
-func oneText(doc NumberDoc, u quantity.Unit, si float64) string {
+func oneText(doc *NumberDoc, u quantity.Unit, si float64) string {
 	switch {
 	case math.IsInf(si, 1):
 		return "without limit"
@@ -148,8 +183,8 @@ func (w *work) numbersTable(caption string, answers []*answer, names ...string) 
 }
 
 func (a *answer) cell(name string) string {
-	if n, ok := a.Numbers[name]; ok {
-		return n.Text
+	if text := a.text(name); text != "" {
+		return text
 	}
 	return string(CannotBeTold)
 }
@@ -158,6 +193,17 @@ func (a *answer) cell(name string) string {
 // Better verdicts do not come first: the order is by rank alone, whole windows
 // before parts.
 func (w *work) finish(answers []*answer) {
+	w.order(answers)
+	for _, a := range answers {
+		w.out.Materials = append(w.out.Materials, a.MaterialOutcome)
+		if a.Partly == "" && !math.IsNaN(a.rank) && !containsText(w.out.Ranking, a.Ranked()) {
+			w.out.Ranking = append(w.out.Ranking, a.Ranked())
+		}
+	}
+}
+
+// order judges every answer and sorts them.
+func (w *work) order(answers []*answer) {
 	for _, a := range answers {
 		a.judge()
 	}
@@ -175,12 +221,6 @@ func (w *work) finish(answers []*answer) {
 		}
 		return false
 	})
-	for _, a := range answers {
-		w.out.Materials = append(w.out.Materials, a.MaterialOutcome)
-		if a.Partly == "" && !math.IsNaN(a.rank) && !containsText(w.out.Ranking, a.Label()) {
-			w.out.Ranking = append(w.out.Ranking, a.Ranked())
-		}
-	}
 }
 
 func containsText(list []string, s string) bool {

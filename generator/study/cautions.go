@@ -8,6 +8,7 @@ const (
 	CautionHot         = "Conductors that carry large currents and heating elements get hot enough to burn skin and to start a fire. Computed temperatures are averages; hot spots are hotter."
 	CautionIsolate     = "Isolate, lock out and discharge before measuring."
 	CautionBattery     = "Battery circuits: mind the prospective fault current and the direct-current arc; fuse the sense leads at the tap."
+	CautionInductive   = "Breaking current in an inductive winding makes dangerous voltage: let it decay, and discharge before touching a terminal."
 	CautionProtective  = "Never let one of these numbers be the only means of a protective function."
 )
 

@@ -15,7 +15,7 @@ var changeNumbers = []NumberDoc{
 	{"change_most", quantity.Ratio, "ppm", 4, "greatest rise", "Highest change of R over the window."},
 	{"change_cold", quantity.Ratio, "ppm", 4, "cold side", "Greatest change of R below the reference temperature."},
 	{"change_hot", quantity.Ratio, "ppm", 4, "hot side", "Greatest change of R above the reference temperature."},
-	{"greatest_at", quantity.Temperature, "°C", 4, "at", "Temperature of the greatest change."},
+	{"at_temperature", quantity.Temperature, "°C", 4, "at", "Temperature of the greatest change."},
 	{"box", quantity.Coefficient1, "ppm/K", 3, "box", "Box coefficient over the window."},
 	{"turning_point", quantity.Temperature, "°C", 4, "turns at", "Turning point of R inside the window."},
 }
@@ -173,7 +173,7 @@ func (a *answer) tellSwing(s swing) {
 	a.tellAt("change_hot", s.hot, s.hotAt)
 	a.tell("box", s.box)
 	if s.nominal {
-		a.tell("greatest_at", nominal(s.greatestAt))
+		a.tell("at_temperature", nominal(s.greatestAt))
 	} else {
 		delete(a.at, "greatest_change")
 	}

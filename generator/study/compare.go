@@ -64,10 +64,7 @@ func runCompare(w *work) {
 	if w.failed {
 		return
 	}
-	var answers []*answer
-	for _, r := range records {
-		answers = append(answers, c.measure(r))
-	}
+	answers := w.each(records, func(r *material.Record) []*answer { return []*answer{c.measure(r)} })
 	w.finish(answers)
 	c.tables(answers)
 	c.chart(answers)

@@ -9,7 +9,7 @@ import (
 
 // tables makes one table for the whole window and one for the parts.
 func (c *comparison) tables(answers []*answer) {
-	names := []string{"resistivity", "slope", "chord_cold", "chord_hot", "box", "change_least", "change_most", "change_cold", "change_hot", "greatest_change", "greatest_at", "deviation"}
+	names := []string{"resistivity", "slope", "chord_cold", "chord_hot", "box", "change_least", "change_most", "change_cold", "change_hot", "greatest_change", "at_temperature", "deviation"}
 	c.out.Tables = append(c.out.Tables, wholeAndParts(c.work, "Every measure over "+windowText(c.lo, c.hi)+", counted from "+quantity.CelsiusText(c.reference), answers, names...)...)
 }
 

@@ -51,7 +51,7 @@ func TestNumbers(t *testing.T) {
 		t.Fatal(findings)
 	}
 	m := of(o, "check")
-	for name, want := range map[string]float64{"greatest_change": -2762.5, "change_most": 50, "greatest_at": 105, "slope": 10, "resistivity": 43} {
+	for name, want := range map[string]float64{"greatest_change": -2762.5, "change_most": 50, "at_temperature": 105, "slope": 10, "resistivity": 43} {
 		if got := m.Numbers[name]; got.Value == nil || math.Abs(*got.Value-want) > 1e-6 {
 			t.Errorf("%s: %v, want %g", name, got.Value, want)
 		}

@@ -16,6 +16,13 @@ type Kind struct {
 	Run     func(w *work)
 
 	Shape *form.Shape // of the whole block
+	index map[string]indexed
+}
+
+// indexed is a number with its unit looked up.
+type indexed struct {
+	doc  *NumberDoc
+	unit quantity.Unit
 }
 
 // NumberDoc describes one named number of a result.
@@ -40,6 +47,10 @@ func (k Kind) whole() Kind {
 	fields = append(fields,
 		form.Field{Key: "require", Is: form.Mapping(require), Doc: "Bounds on the numbers, by their names."},
 		form.Field{Key: "binding", Is: form.YesNo, Doc: "Whether a requirement that does not hold fails the publication.", Example: "yes"})
+	k.index = map[string]indexed{}
+	for i, n := range k.Numbers {
+		k.index[n.Name] = indexed{&k.Numbers[i], n.unit()}
+	}
 	k.Shape = &form.Shape{Name: k.Name, Doc: k.Doc, Fields: fields}
 	return k
 }
@@ -51,11 +62,9 @@ func (n NumberDoc) unit() quantity.Unit {
 
 func (n NumberDoc) example() string { return quantity.Number(1, 1) + " " + n.Unit }
 
-func (k Kind) number(name string) NumberDoc {
-	for _, n := range k.Numbers {
-		if n.Name == name {
-			return n
-		}
+func (k *Kind) number(name string) *NumberDoc {
+	if n, ok := k.index[name]; ok {
+		return n.doc
 	}
 	panic("study " + k.Name + " has no number " + name)
 }

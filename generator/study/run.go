@@ -1,6 +1,7 @@
 package study
 
 import (
+	"sort"
 	"strings"
 
 	"ohmfolio/generator/form"
@@ -10,13 +11,19 @@ import (
 )
 
 // kinds is the one list of studies, sorted by name.
-var kinds = []Kind{compareKind.whole()}
+var kinds = []Kind{acceptanceKind.whole(), chooseKind.whole(), compareKind.whole(), shuntKind.whole()}
 
 // Kinds returns the studies in order of their names.
 func Kinds() []Kind { return append([]Kind{}, kinds...) }
 
 // FindingKinds documents what reading a study block may find.
-var FindingKinds = []place.Kind{
+var FindingKinds = append([]place.Kind{
+	{
+		Code: "family-unknown", Severity: place.Error, Title: "A family of which there is no record",
+		Explanation: "A shortlist over a family needs its name as the records write it.",
+		Trigger:     triggerFence("study: choose", "families: [shunt alloys]\nwindow: 0 °C to 100 °C"),
+		Mend:        "write a family as the records do",
+	},
 	{
 		Code: "baseline-missing", Severity: place.Error, Title: "A deviation from nothing",
 		Explanation: "A comparison that shows deviation tells how far each material lies from one of them.",
@@ -41,7 +48,7 @@ var FindingKinds = []place.Kind{
 		Trigger:     trigger("materials: [copper]\nwindow: 100 °C to 0 °C"),
 		Mend:        "write the lower temperature first",
 	},
-}
+}, append(acceptanceFindings, shuntFindings...)...)
 
 // triggerRecord is the smallest record that a study can work on.
 const triggerRecord = `-- materials/sources.yaml --
@@ -111,3 +118,12 @@ func kindNames() []string {
 func names() string { return strings.Join(kindNames(), ", ") }
 
 func quote(s string) string { return "“" + s + "”" }
+
+func sortedKeys(set map[string]bool) []string {
+	var list []string
+	for k := range set {
+		list = append(list, k)
+	}
+	sort.Strings(list)
+	return list
+}

@@ -40,6 +40,7 @@ type Outcome struct {
 	Cautions   []string          `json:"cautions"`
 	Charts     []Chart           `json:"-"`
 	Tables     []Table           `json:"tables"`
+	Listed     bool              `json:"-"` // the reasons stand in the tables already
 	Position   place.Position    `json:"-"`
 }
 
@@ -85,7 +86,6 @@ type Number struct {
 	Lower *float64 `json:"lower"`
 	Upper *float64 `json:"upper"`
 	Kind  string   `json:"kind"` // "limits", "partial limits", "nominal", "exact"
-	Text  string   `json:"-"`    // as pages print it
 }
 
 // Label names the answer in a table: the material, with its size.

@@ -8,6 +8,10 @@ import (
 
 // judge holds the numbers against what is required (definitions: verdicts).
 func (a *answer) judge() {
+	if a.judged {
+		return
+	}
+	a.judged = true
 	require := a.w.block.Get("require")
 	for i, name := range require.Keys() {
 		bound, ok := require.List()[i].Quantity()
@@ -15,7 +19,7 @@ func (a *answer) judge() {
 			continue
 		}
 		r := a.requirement(name, bound)
-		if len(a.Requirements) == 0 {
+		if a.Verdict == NotAsked {
 			a.Verdict = Holds
 		}
 		a.Requirements = append(a.Requirements, r)
@@ -26,16 +30,28 @@ func (a *answer) judge() {
 	}
 }
 
+// condition adds a requirement that is no number: a status, a stock.
+func (a *answer) condition(name, bound string, verdict Verdict, why string) {
+	if a.Verdict == NotAsked {
+		a.Verdict = Holds
+	}
+	a.Requirements = append(a.Requirements, Requirement{Name: name, Bound: bound, Verdict: verdict})
+	a.Verdict = worse(a.Verdict, verdict)
+	if verdict != Holds {
+		a.reason(why)
+	}
+}
+
 func (a *answer) told(name string) string {
-	n, ok := a.Numbers[name]
-	if !ok {
+	text := a.text(name)
+	if text == "" {
 		return "no value"
 	}
 	doc := a.w.kind.number(name)
 	if doc.Unit == "" || doc.Unit == "ppm" {
-		return n.Text
+		return text
 	}
-	return n.Text + quantity.NarrowSpace + n.Unit
+	return text + quantity.NarrowSpace + a.w.unit(doc).Symbol
 }
 
 func (a *answer) requirement(name string, bound quantity.Quantity) Requirement {
@@ -54,7 +70,7 @@ func (a *answer) requirement(name string, bound quantity.Quantity) Requirement {
 // judged holds one number against one bound. A plain value bounds the
 // magnitude; limits bound the value itself. Of two bounds the tighter one is
 // told. It fails for certain when even the best case is beyond the bound.
-func judged(doc NumberDoc, bound quantity.Quantity, s span, known bool) Requirement {
+func judged(doc *NumberDoc, bound quantity.Quantity, s span, known bool) Requirement {
 	lower, upper := math.Inf(-1), math.Inf(1)
 	if bound.Limits != nil {
 		lower, upper = bound.Limits.Lower, bound.Limits.Upper

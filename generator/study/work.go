@@ -18,7 +18,8 @@ type work struct {
 	report *place.List
 	kind   Kind
 	out    *Outcome
-	failed bool // a finding stops the study
+	failed bool          // a finding stops the study
+	house  quantity.Unit // of resistivity
 }
 
 // fail adds a finding that stops the study.
@@ -148,9 +149,13 @@ func inWords(name string) string { return strings.ReplaceAll(name, "_", " ") }
 
 // houseResistivity is the house unit of resistivity.
 func (w *work) houseResistivity() quantity.Unit {
-	if u, ok := quantity.FindUnit(quantity.Resistivity, w.lib.Settings.Units.Resistivity); ok {
-		return u
+	if w.house.Symbol != "" {
+		return w.house
 	}
-	u, _ := quantity.FindUnit(quantity.Resistivity, "µΩ·cm")
+	u, ok := quantity.FindUnit(quantity.Resistivity, w.lib.Settings.Units.Resistivity)
+	if !ok {
+		u, _ = quantity.FindUnit(quantity.Resistivity, "µΩ·cm")
+	}
+	w.house = u
 	return u
 }
