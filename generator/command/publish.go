@@ -111,10 +111,8 @@ func joinError(first, second error) error {
 func failing(outcomes []examine.Judged) []failingJSON {
 	list := []failingJSON{}
 	for _, j := range outcomes {
-		for _, m := range j.Outcome.Materials {
-			if j.Outcome.Binding && m.Verdict != study.Holds && m.Verdict != study.NotAsked {
-				list = append(list, failingJSON{j.Outcome.Study, j.Outcome.Title, j.Document.Source.File, m.Material, string(m.Verdict)})
-			}
+		for _, m := range j.Outcome.Broken() {
+			list = append(list, failingJSON{j.Outcome.Study, j.Outcome.Title, j.Document.Source.File, m.Material, string(m.Verdict)})
 		}
 	}
 	return list

@@ -116,10 +116,8 @@ var bindingStudyFails = Rule{
 	},
 	Whole: func(p *Pass) {
 		for _, j := range p.Outcomes {
-			for _, m := range j.Outcome.Materials {
-				if j.Outcome.Binding && m.Verdict != study.Holds && m.Verdict != study.NotAsked {
-					p.Find(j.Document.Source, j.Outcome.Position, quote(j.Outcome.Title)+": "+m.Material+" "+string(m.Verdict)+" ("+strings.Join(m.Reasons, "; ")+")", p.rule.Kind.Mend)
-				}
+			for _, m := range j.Outcome.Broken() {
+				p.Find(j.Document.Source, j.Outcome.Position, quote(j.Outcome.Title)+": "+m.Label()+" "+string(m.Verdict)+" ("+strings.Join(m.Reasons, "; ")+")", p.rule.Kind.Mend)
 			}
 		}
 	},
@@ -134,7 +132,7 @@ var bindingOnDraft = Rule{
 	},
 	Whole: func(p *Pass) {
 		for _, j := range p.Outcomes {
-			for _, m := range j.Outcome.Materials {
+			for _, m := range j.Outcome.Chosen() {
 				for _, r := range restsOn(p.Library, m) {
 					if j.Outcome.Binding && r.Status != material.Released {
 						p.Find(j.Document.Source, j.Outcome.Position, quote(j.Outcome.Title)+" is binding and rests on "+r.ID+", which is "+orDraft(r.Status), p.rule.Kind.Mend)
@@ -154,7 +152,7 @@ var withdrawnInUse = Rule{
 	},
 	Whole: func(p *Pass) {
 		for _, j := range p.Outcomes {
-			for _, m := range j.Outcome.Materials {
+			for _, m := range j.Outcome.Chosen() {
 				for _, r := range restsOn(p.Library, m) {
 					if r.Status == material.Withdrawn {
 						p.Find(j.Document.Source, j.Outcome.Position, quote(j.Outcome.Title)+" uses "+r.ID+", which is withdrawn: "+r.WithdrawnReason, p.rule.Kind.Mend)

@@ -104,7 +104,7 @@ func linkTo(list []link, path string) bool {
 
 // decisionRow is one requirement of one study.
 type decisionRow struct {
-	Title, Path, Material, Name, Requirement, Verdict, Margin, Evidence string
+	Title, Path, Material, Size, Name, Requirement, Verdict, Margin, Evidence string
 	Binding                                                             bool
 	margin                                                              float64
 }
@@ -138,13 +138,18 @@ func (s *site) decisionRows() []decisionRow {
 }
 
 func (s *site) decisionRow(d *library.Document, o *study.Outcome, m study.MaterialOutcome, r study.Requirement) decisionRow {
-	row := decisionRow{Title: o.Title, Path: pagePath(d), Material: m.Material, Name: s.short(m.Material), Requirement: requirementText(r),
+	row := decisionRow{Title: o.Title, Path: pagePath(d), Size: m.Size, Material: m.Material, Name: s.short(m.Material), Requirement: requirementText(r),
 		Verdict: r.Verdict.Shown(), Margin: "cannot be told", Binding: o.Binding, margin: -1e9}
 	if r.Margin != nil {
 		row.Margin, row.margin = quantity.Fixed(*r.Margin*100, 1)+quantity.NarrowSpace+"%", *r.Margin
 	}
+	var evidence []string
 	for _, e := range m.Evidence {
-		row.Evidence = e.Record + ", revision " + strconv.Itoa(e.Revision) + ", " + e.Fingerprint + ", " + e.Status
+		evidence = append(evidence, e.Record+", revision "+strconv.Itoa(e.Revision)+", "+e.Fingerprint+", "+e.Status)
+	}
+	row.Evidence = strings.Join(evidence, "; ")
+	if m.Material == "" {
+		row.Name = m.Name
 	}
 	return row
 }

@@ -25,7 +25,7 @@ type look struct {
 }
 
 var templateNames = []string{"frame", "home-page", "materials-page", "material-page", "sheet-page", "report-page", "guide-page",
-	"sources-page", "words-page", "decisions-page", "review-page", "side-by-side-page", "study-part"}
+	"sources-page", "words-page", "decisions-page", "review-page", "side-by-side-page", "study-part", "study-page"}
 
 func loadLook(theme fs.FS, list []byte) (*look, error) {
 	l := &look{scripts: map[string]string{}, templates: template.New("").Funcs(helpers)}

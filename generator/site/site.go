@@ -45,6 +45,7 @@ func Outputs(in *Input) ([]output.Output, error) {
 	for _, d := range in.Library.Documents {
 		if d.Room != "" {
 			list = append(list, s.document(d))
+			list = append(list, s.studySheets(d)...)
 		}
 	}
 	return list, nil

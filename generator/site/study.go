@@ -2,6 +2,8 @@ package site
 
 import (
 	"bytes"
+	"crypto/sha256"
+	"encoding/hex"
 	"fmt"
 	"html"
 	"html/template"
@@ -10,49 +12,143 @@ import (
 
 	"ohmfolio/generator/figure"
 	"ohmfolio/generator/library"
+	"ohmfolio/generator/output"
 	"ohmfolio/generator/study"
 )
 
-// studyPart is what study-part.tmpl prints.
+// studyPart is what study-part.tmpl prints: Given, Asked, Answer.
 type studyPart struct {
 	ID       string
 	Deep     bool // stands under a heading of the page, not right under its title
+	Sheet    string
 	O        *study.Outcome
+	Asked    []string
+	Answer   string
+	Ranking  []link
+	Unranked bool // some answers stand outside the ranking
 	Figures  []*figure.Figure
 	Tables   []template.HTML
-	Ranking  []link
-	Asked    []string
-	Reasons  []string
+	Own      []template.HTML // tables of single materials
+	Reasons  []remark
 	Evidence []string
 }
 
+// remark is a reason or a warning with the names of all that it holds for.
+type remark struct {
+	Text  string
+	Names []string
+}
+
+func (p *studyPart) remark(text, name string) {
+	for i := range p.Reasons {
+		if p.Reasons[i].Text == text {
+			p.Reasons[i].Names = append(p.Reasons[i].Names, name)
+			return
+		}
+	}
+	p.Reasons = append(p.Reasons, remark{text, []string{name}})
+}
+
 func (s *site) studyPart(w *bytes.Buffer, o *study.Outcome, d *library.Document, i int, root string) {
-	p := studyPart{ID: "study-" + strconv.Itoa(i+1), O: o, Deep: d.Page.Studies[i].Level > 1}
+	p := s.partOf(o, d, i, root)
+	p.Sheet = root + studyPath(d, i)
+	if err := s.look.templates.ExecuteTemplate(w, "study", p); err != nil {
+		w.WriteString("<p>" + html.EscapeString(err.Error()) + "</p>")
+	}
+}
+
+func (s *site) partOf(o *study.Outcome, d *library.Document, i int, root string) *studyPart {
+	p := &studyPart{ID: "study-" + strconv.Itoa(i+1), O: o, Deep: d.Page.Studies[i].Level > 1, Answer: answerText(o), Unranked: len(o.Ranking) < len(o.Materials)}
 	for n, c := range o.Charts {
 		p.Figures = append(p.Figures, chartFigure(c, fmt.Sprintf("%s-%d-%d", d.Stem, i+1, n+1)))
 	}
 	for _, t := range o.Tables {
 		p.Tables = append(p.Tables, s.studyTable(t, root))
 	}
-	for _, id := range o.Ranking {
-		l := s.materialLink(id, root)
-		l.Name = s.short(id)
-		p.Ranking = append(p.Ranking, l)
+	for _, ranked := range o.Ranking {
+		p.Ranking = append(p.Ranking, s.rankedLink(ranked, root))
 	}
 	for _, m := range o.Materials {
-		for _, r := range m.Requirements {
-			p.Asked = append(p.Asked, s.short(m.Material)+": "+requirementText(r)+" "+r.Verdict.Shown())
+		s.addAnswer(p, m, root)
+	}
+	return p
+}
+
+// rankedLink leads to the material of "ID" or "ID, size".
+func (s *site) rankedLink(ranked, root string) link {
+	id, size, sized := strings.Cut(ranked, ", ")
+	l := s.materialLink(id, root)
+	l.Name = s.short(id)
+	if sized {
+		l.Name += ", " + size
+	}
+	return l
+}
+
+// addAnswer adds what one material's answer brings: bounds and evidence once,
+// reasons and warnings with its name, tables of its own.
+func (s *site) addAnswer(p *studyPart, m study.MaterialOutcome, root string) {
+	once := func(list *[]string, text string) {
+		for _, have := range *list {
+			if have == text {
+				return
+			}
 		}
-		for _, r := range append(m.Reasons, m.Warnings...) {
-			p.Reasons = append(p.Reasons, s.short(m.Material)+": "+r)
-		}
-		for _, e := range m.Evidence {
-			p.Evidence = append(p.Evidence, fmt.Sprintf("%s, data %s, revision %d, %s, %s, checked against %s", e.Record, e.Data, e.Revision, e.Fingerprint, e.Status, e.Checked))
+		*list = append(*list, text)
+	}
+	for _, r := range m.Requirements {
+		once(&p.Asked, requirementText(r))
+	}
+	name := s.short(m.Material)
+	if m.Material == "" {
+		name = m.Name
+	}
+	if m.Size != "" {
+		name += ", " + m.Size
+	}
+	if !p.O.Listed {
+		for _, r := range m.Reasons {
+			p.remark(r, name)
 		}
 	}
-	if err := s.look.templates.ExecuteTemplate(w, "study", p); err != nil {
-		w.WriteString("<p>" + html.EscapeString(err.Error()) + "</p>")
+	for _, w := range m.Warnings {
+		if !p.O.Listed || m.Verdict == study.Holds || m.Verdict == study.HoldsNominally {
+			p.remark(w, name)
+		}
 	}
+	for _, t := range m.Tables {
+		p.Own = append(p.Own, s.studyTable(t, root))
+	}
+	for _, e := range m.Evidence {
+		once(&p.Evidence, evidenceText(e))
+	}
+}
+
+func evidenceText(e study.Evidence) string {
+	return fmt.Sprintf("%s, data %s, revision %d, %s, %s, checked against %s", e.Record, e.Data, e.Revision, e.Fingerprint, e.Status, e.Checked)
+}
+
+// answerText counts the verdicts in words; without requirements there is
+// nothing to judge.
+func answerText(o *study.Outcome) string {
+	count := map[study.Verdict]int{}
+	for _, m := range o.Materials {
+		count[m.Verdict]++
+	}
+	var parts []string
+	for _, v := range []study.Verdict{study.Holds, study.HoldsNominally, study.CannotBeTold, study.Fails} {
+		if count[v] == 0 {
+			continue
+		}
+		if len(o.Materials) == 1 {
+			return v.Shown() + "."
+		}
+		parts = append(parts, v.Shown()+": "+strconv.Itoa(count[v]))
+	}
+	if len(parts) == 0 {
+		return "Nothing is required; the numbers stand below."
+	}
+	return strings.Join(parts, "; ") + " of " + strconv.Itoa(len(o.Materials)) + "."
 }
 
 func (s *site) short(id string) string {
@@ -63,7 +159,57 @@ func (s *site) short(id string) string {
 }
 
 func requirementText(r study.Requirement) string {
-	return strings.ReplaceAll(r.Name, "_", " ") + " within " + r.Bound
+	name := strings.ReplaceAll(r.Name, "_", " ")
+	if strings.HasPrefix(r.Bound, ">") || strings.HasPrefix(r.Bound, "<") || strings.HasPrefix(r.Bound, "≥") || strings.HasPrefix(r.Bound, "≤") {
+		return name + " " + r.Bound
+	}
+	if r.Unit == "" && r.Worst == nil {
+		return name + " " + r.Bound
+	}
+	return name + " within " + r.Bound
+}
+
+// studySheet is what study-page.tmpl prints: one study on paper.
+type studySheet struct {
+	frame
+	Part                    *studyPart
+	Number, State, Identity string
+	Report                  link
+	Cautions                cautionList
+}
+
+// studyPath is where the sheet of a document's study is written.
+func studyPath(d *library.Document, i int) string {
+	return "study/" + d.Stem + "-" + strconv.Itoa(i+1) + ".html"
+}
+
+// studySheets are the sheets of every study of the reports.
+func (s *site) studySheets(d *library.Document) []output.Output {
+	var list []output.Output
+	for i, o := range s.outcomes(d) {
+		list = append(list, s.page(studyPath(d, i), "study-page", func() any {
+			p := s.partOf(o, d, i, "../")
+			number := s.in.Library.Settings.DocumentPrefix + "-" + d.Stem + "-" + strconv.Itoa(i+1)
+			return studySheet{frame: s.frame(o.Title, "sheet", "../", ""), Part: p, Number: number, State: "study: " + o.Study,
+				Identity: "answer " + answerPrint(o), Report: link{d.Page.Title, "../" + pagePath(d)}, Cautions: cautionList{"cautions", o.Cautions}}
+		}))
+	}
+	return list
+}
+
+// answerPrint is a short hash over what the study was given and rests on, so
+// that two printed copies of one study can be told apart.
+func answerPrint(o *study.Outcome) string {
+	h := sha256.New()
+	fmt.Fprintln(h, o.Study, o.Title, o.Parameters)
+	for _, m := range o.Materials {
+		fmt.Fprintln(h, m.Material, m.Size, m.Verdict, m.Evidence)
+		for _, r := range m.Requirements {
+			fmt.Fprintln(h, r.Name, r.Bound)
+		}
+	}
+	text := hex.EncodeToString(h.Sum(nil)[:4])
+	return text[:4] + "-" + text[4:]
 }
 
 // chartFigure gives each series an ink and a dash; after four inks the dashes

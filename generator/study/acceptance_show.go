@@ -59,12 +59,13 @@ func (c *card) benchTable() Table {
 	return t
 }
 
-// inward rounds a pair of limits inward, to a thirtieth of their width or finer.
+// inward rounds a pair of limits inward, to a half per cent of the tolerance or
+// finer.
 func (c *card) inward(lo, hi float64) (string, string) {
 	lo, hi = c.unit.FromSI(lo), c.unit.FromSI(hi)
 	decimals := 4
-	if width := hi - lo; width > 0 {
-		decimals = max(0, int(math.Ceil(-math.Log10(width/300))))
+	if width := c.unit.FromSI(c.limits.hi) - c.unit.FromSI(c.limits.lo); width > 0 {
+		decimals = max(0, int(math.Ceil(-math.Log10(width/200))))
 	}
 	lo, hi = quantity.RoundInward(lo, hi, decimals)
 	return quantity.Fixed(lo, decimals), quantity.Fixed(hi, decimals)
@@ -122,7 +123,11 @@ func disposition(answers []*answer) string {
 
 // blanks are what is written by hand on the card.
 func blanks() Table {
-	return Table{Caption: "To be filled in at the bench", Heads: []string{"What", "entry"}, Rows: [][]string{
-		{"lot and heat number on coil, label and certificate", ""}, {"date and time", ""}, {"temperature of the piece", ""}, {"reading, forward and reverse", ""},
-		{"instrument and its calibration", ""}, {"operator", ""}, {"verdict and signature", ""}}}
+	t := Table{Caption: "To be filled in at the bench", Heads: []string{"What", "entry"}}
+	room := strings.Repeat("\u2003", 16) // to write in
+	for _, what := range []string{"lot and heat number on coil, label and certificate", "date and time", "temperature of the piece", "reading, forward and reverse",
+		"instrument and its calibration", "operator", "verdict and signature"} {
+		t.Rows = append(t.Rows, []string{what, room})
+	}
+	return t
 }

@@ -86,7 +86,9 @@ func (a *answer) property(name string) (span, bool) {
 		// "at most 1 µV/K" bounds the magnitude.
 		return span{v: math.NaN(), lo: -q.Limits.Upper, hi: q.Limits.Upper, banded: true, sure: math.NaN()}, true
 	case q.Limits != nil && p.Class != material.Typical && !math.IsInf(q.Limits.Upper, 1):
-		return given(q), true
+		s := given(q)
+		s.v = q.Value // none when the source gives limits alone
+		return s, true
 	case q.HasValue():
 		return nominal(q.Value), true
 	}
@@ -180,6 +182,40 @@ func (w *work) numbersTable(caption string, answers []*answer, names ...string) 
 		t.Rows, t.Links = append(t.Rows, row), append(t.Links, a.Material)
 	}
 	return t
+}
+
+// requirementsTable holds every answer against what was asked: one column a
+// requirement, with verdict and margin. Nil rows when nothing was.
+func (w *work) requirementsTable(answers []*answer) (Table, bool) {
+	require := w.block.Get("require").Keys()
+	if len(require) == 0 {
+		return Table{}, false
+	}
+	t := Table{Caption: "Held against what was asked, with the margin that is left", Heads: []string{"Material"}}
+	for i, name := range require {
+		t.Heads = append(t.Heads, inWords(name)+", "+w.block.Get("require").List()[i].Text())
+	}
+	for _, a := range answers {
+		row := []string{a.Label()}
+		for _, name := range require {
+			row = append(row, a.held(name))
+		}
+		t.Rows, t.Links = append(t.Rows, row), append(t.Links, a.Material)
+	}
+	return t, true
+}
+
+func (a *answer) held(name string) string {
+	for _, r := range a.Requirements {
+		if r.Name != name {
+			continue
+		}
+		if r.Margin == nil {
+			return r.Verdict.Shown()
+		}
+		return r.Verdict.Shown() + ", " + quantity.Fixed(*r.Margin*100, 0) + quantity.NarrowSpace + "%"
+	}
+	return ""
 }
 
 func (a *answer) cell(name string) string {

@@ -43,7 +43,7 @@ type choice struct {
 }
 
 func runChoose(w *work) {
-	w.out.Cautions = comparisonCautions
+	w.out.Cautions, w.out.Choice = comparisonCautions, true
 	c := &choice{work: w}
 	c.lo, c.hi = w.window("window")
 	c.reference = w.kelvin("calibrated_at", quantity.ZeroCelsius+20, "common practice")

@@ -86,6 +86,9 @@ func (e *element) endCooled() {
 	rise := k.through(func(x float64) float64 { return peak * k.v / x })
 	rise.banded = false
 	e.a.tell("rise_end_cooled_max", rise)
+	if p := e.a.Record.Property("service_temperature"); p != nil && p.Continuous != nil && ends.v+peak > p.Continuous.Value {
+		e.a.warn("the hottest point, " + quantity.Fixed(ends.v+peak-quantity.ZeroCelsius, 0) + quantity.NarrowSpace + "°C, lies above the service temperature of " + p.Continuous.Text)
+	}
 	e.a.tell("element_temperature", nominal(mean))
 }
 

@@ -51,6 +51,9 @@ func (s *shunt) show(answers []*answer) {
 		s.numbersTable(caption, answers, "width", "length", "squares", "resistance", "trim_aim", "current_density", "power", "surface_load"),
 		s.numbersTable("Temperature and error of the same elements", answers, "terminal_temperature", "element_temperature", "rise_end_cooled_max", "rise_adiabatic", "derated_current",
 			"greatest_change", "at_temperature", "alpha_effective", "beta_effective", "copper_share_max", "emf_error_full", "emf_error_small", "budget_worst", "budget_rss"))
+	if t, asked := s.requirementsTable(answers); asked {
+		s.out.Tables = append(s.out.Tables, t)
+	}
 	s.assumptions()
 	s.chart(answers)
 	held := false

@@ -40,6 +40,7 @@ type Outcome struct {
 	Cautions   []string          `json:"cautions"`
 	Charts     []Chart           `json:"-"`
 	Tables     []Table           `json:"tables"`
+	Choice     bool              `json:"-"` // one material that holds is enough
 	Listed     bool              `json:"-"` // the reasons stand in the tables already
 	Position   place.Position    `json:"-"`
 }
@@ -90,10 +91,13 @@ type Number struct {
 
 // Label names the answer in a table: the material, with its size.
 func (m MaterialOutcome) Label() string {
-	if m.Size != "" {
-		return m.Name + ", " + m.Size
+	switch {
+	case m.Size == "":
+		return m.Name
+	case m.Record != nil:
+		return m.Record.ShortName() + ", " + m.Size
 	}
-	return m.Name
+	return m.Name + ", " + m.Size
 }
 
 // Ranked names the answer in a ranking: the ID, with its size.

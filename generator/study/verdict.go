@@ -24,7 +24,7 @@ func (a *answer) judge() {
 		}
 		a.Requirements = append(a.Requirements, r)
 		a.Verdict = worse(a.Verdict, r.Verdict)
-		if r.Verdict != Holds {
+		if r.Verdict == Fails || r.Verdict == CannotBeTold {
 			a.reason(inWords(name) + " " + string(r.Verdict) + ": " + a.told(name) + " against " + bound.Text)
 		}
 	}

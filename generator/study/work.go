@@ -2,6 +2,7 @@ package study
 
 import (
 	"math"
+	"strconv"
 	"strings"
 
 	"ohmfolio/generator/form"
@@ -134,7 +135,10 @@ func givenText(n *form.Node) string {
 		}
 		return strings.Join(parts, ", ")
 	}
-	if len(n.List()) > 0 {
+	if list := n.List(); len(list) > 0 {
+		if list[0].IsMapping() {
+			return strconv.Itoa(len(list)) + ", as in the tables"
+		}
 		var parts []string
 		for _, e := range n.List() {
 			parts = append(parts, givenText(e))
