@@ -37,6 +37,15 @@ type studyPart struct {
 type remark struct {
 	Text  string
 	Names []string
+	all   int // answers of the study
+}
+
+// Who names them; all of several are just that.
+func (r remark) Who() string {
+	if r.all > 1 && len(r.Names) == r.all {
+		return "all"
+	}
+	return strings.Join(r.Names, "; ")
 }
 
 func (p *studyPart) remark(text, name string) {
@@ -46,7 +55,7 @@ func (p *studyPart) remark(text, name string) {
 			return
 		}
 	}
-	p.Reasons = append(p.Reasons, remark{text, []string{name}})
+	p.Reasons = append(p.Reasons, remark{text, []string{name}, len(p.O.Materials)})
 }
 
 func (s *site) studyPart(w *bytes.Buffer, o *study.Outcome, d *library.Document, i int, root string) {
@@ -71,7 +80,21 @@ func (s *site) partOf(o *study.Outcome, d *library.Document, i int, root string)
 	for _, m := range o.Materials {
 		s.addAnswer(p, m, root)
 	}
+	for _, m := range o.Chosen() {
+		for _, e := range m.Evidence {
+			p.Evidence = once(p.Evidence, evidenceText(e))
+		}
+	}
 	return p
+}
+
+func once(list []string, text string) []string {
+	for _, have := range list {
+		if have == text {
+			return list
+		}
+	}
+	return append(list, text)
 }
 
 // rankedLink leads to the material of "ID" or "ID, size".
@@ -88,16 +111,8 @@ func (s *site) rankedLink(ranked, root string) link {
 // addAnswer adds what one material's answer brings: bounds and evidence once,
 // reasons and warnings with its name, tables of its own.
 func (s *site) addAnswer(p *studyPart, m study.MaterialOutcome, root string) {
-	once := func(list *[]string, text string) {
-		for _, have := range *list {
-			if have == text {
-				return
-			}
-		}
-		*list = append(*list, text)
-	}
 	for _, r := range m.Requirements {
-		once(&p.Asked, requirementText(r))
+		p.Asked = once(p.Asked, requirementText(r))
 	}
 	name := s.short(m.Material)
 	if m.Material == "" {
@@ -118,9 +133,6 @@ func (s *site) addAnswer(p *studyPart, m study.MaterialOutcome, root string) {
 	}
 	for _, t := range m.Tables {
 		p.Own = append(p.Own, s.studyTable(t, root))
-	}
-	for _, e := range m.Evidence {
-		once(&p.Evidence, evidenceText(e))
 	}
 }
 

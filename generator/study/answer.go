@@ -184,6 +184,47 @@ func (w *work) numbersTable(caption string, answers []*answer, names ...string) 
 	return t
 }
 
+// What fits across a sheet of paper: numbers as columns, or answers.
+const (
+	mostColumns = 7
+	mostAnswers = 5
+)
+
+// numbersTables lays out many numbers so that they fit on paper: a few answers
+// as columns with the numbers as rows; otherwise several tables of some columns
+// each.
+func (w *work) numbersTables(caption string, answers []*answer, names ...string) []Table {
+	if len(answers) > 0 && len(answers) <= mostAnswers && len(names) > mostColumns {
+		return []Table{transposed(w.numbersTable(caption, answers, names...))}
+	}
+	var list []Table
+	for len(names) > 0 {
+		n := min(mostColumns, len(names))
+		t := w.numbersTable(caption, answers, names[:n]...)
+		if len(t.Heads) > 2 || len(list) == 0 {
+			list = append(list, t)
+		}
+		names, caption = names[n:], caption+", continued"
+	}
+	return list
+}
+
+// transposed turns columns into rows; the answers' names become the heads.
+func transposed(t Table) Table {
+	out := Table{Caption: t.Caption, Heads: []string{"Number"}}
+	for _, row := range t.Rows {
+		out.Heads = append(out.Heads, row[0])
+	}
+	for i := 1; i < len(t.Heads); i++ {
+		line := []string{t.Heads[i]}
+		for _, row := range t.Rows {
+			line = append(line, row[i])
+		}
+		out.Rows = append(out.Rows, line)
+	}
+	return out
+}
+
 // requirementsTable holds every answer against what was asked: one column a
 // requirement, with verdict and margin. Nil rows when nothing was.
 func (w *work) requirementsTable(answers []*answer) (Table, bool) {

@@ -194,9 +194,9 @@ func (c *choice) show(answers []*answer) {
 	}
 	names := []string{"resistivity", "greatest_change", "at_temperature", "change_cold", "change_hot", "turning_point", "emf_to_copper", "service_temperature", "margin"}
 	counted := func(n int) string { return strconv.Itoa(n) + " of " + strconv.Itoa(len(answers)) }
-	c.out.Tables = append(c.out.Tables, c.numbersTable("Shortlist: "+counted(len(short))+", by margin", short, names...))
+	c.out.Tables = append(c.out.Tables, c.numbersTables("Shortlist: "+counted(len(short))+", by margin", short, names...)...)
 	if len(part) > 0 {
-		t := c.numbersTable("Told over part of the window only: "+counted(len(part)), part, names...)
+		t := c.numbersTable("Told over part of the window only: "+counted(len(part)), part, partNames(names)...)
 		t.Heads = append(t.Heads, "judged over")
 		for i, a := range part {
 			t.Rows[i] = append(t.Rows[i], a.Partly)

@@ -24,16 +24,29 @@ func wholeAndParts(w *work, caption string, answers []*answer, names ...string) 
 			parts = append(parts, a)
 		}
 	}
-	list := []Table{w.numbersTable(caption, whole, names...)}
+	list := w.numbersTables(caption, whole, names...)
 	if len(parts) == 0 {
 		return list
 	}
-	t := w.numbersTable("Told over part of the window only", parts, names...)
+	t := w.numbersTable("Told over part of the window only", parts, partNames(names)...)
 	t.Heads = append(t.Heads, "judged over")
 	for i, a := range parts {
 		t.Rows[i] = append(t.Rows[i], a.Partly)
 	}
 	return append(list, t)
+}
+
+// partNames are the numbers told of a part of the window: fewer, since they
+// must not be compared with those of the whole.
+func partNames(names []string) []string {
+	var list []string
+	for _, n := range names {
+		switch n {
+		case "resistivity", "greatest_change", "at_temperature", "change_cold", "change_hot", "box", "emf_to_copper":
+			list = append(list, n)
+		}
+	}
+	return list
 }
 
 // chart draws what the block asked to see, each curve over what its data

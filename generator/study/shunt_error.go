@@ -239,14 +239,14 @@ func (e *element) terms() []term {
 	if g, ok := e.a.spans["greatest_change"]; ok && e.a.Partly == "" {
 		change := g
 		change.lo, change.hi = math.Min(e.a.spans["change_least"].lo, 0), math.Max(e.a.spans["change_most"].hi, 0)
-		add(relative(change), "temperature, with own heat", quantity.CelsiusText(e.lo)+" to "+quantity.Fixed(math.Max(e.hi, orLess(e.hot))-quantity.ZeroCelsius, 1)+quantity.NarrowSpace+"°C from "+quantity.CelsiusText(e.reference), "one-sided, sign kept", "no", true)
+		add(relative(change), "temperature, with own heat", "from "+quantity.CelsiusText(e.reference)+", over "+quantity.CelsiusText(e.lo)+" to "+quantity.Fixed(math.Max(e.hi, orLess(e.hot))-quantity.ZeroCelsius, 1)+quantity.NarrowSpace+"°C", "one-sided, sign kept", "no", true)
 	}
 	if x, ok := e.a.spans["emf_error_full"]; ok {
 		t := term{full: x, small: unknown()}
 		if y, ok := e.a.spans["emf_error_small"]; ok {
 			t.small = y
 		}
-		add(t, "thermal EMF", e.block.Get("terminal_difference").Text()+" between the ends", "sign of the difference unknown", "no", false)
+		add(t, "thermal EMF", "ends apart by "+e.block.Get("terminal_difference").Text(), "sign of the difference unknown", "no", false)
 	}
 	if x, ok := e.quantity("drift"); ok {
 		add(relative(x), "drift", "given", "rectangular", "by recalibration", false)

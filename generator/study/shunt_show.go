@@ -48,9 +48,10 @@ func millimetres(x float64) string { return quantity.Number(x*1e3, 3) + quantity
 func (s *shunt) show(answers []*answer) {
 	caption := "Elements of " + quantity.Number(s.target.v*1e6, 4) + quantity.NarrowSpace + "µΩ between the taps, for " + quantity.Number(s.current.v, 4) + quantity.NarrowSpace + "A"
 	s.out.Tables = append(s.out.Tables,
-		s.numbersTable(caption, answers, "width", "length", "squares", "resistance", "trim_aim", "current_density", "power", "surface_load"),
-		s.numbersTable("Temperature and error of the same elements", answers, "terminal_temperature", "element_temperature", "rise_end_cooled_max", "rise_adiabatic", "derated_current",
-			"greatest_change", "at_temperature", "alpha_effective", "beta_effective", "copper_share_max", "emf_error_full", "emf_error_small", "budget_worst", "budget_rss"))
+		s.numbersTables(caption, answers, "width", "length", "squares", "resistance", "trim_aim", "current_density", "power", "surface_load")...)
+	s.out.Tables = append(s.out.Tables,
+		s.numbersTables("Temperature and error of the same elements", answers, "terminal_temperature", "element_temperature", "rise_end_cooled_max", "rise_adiabatic", "derated_current",
+			"greatest_change", "at_temperature", "alpha_effective", "beta_effective", "copper_share_max", "emf_error_full", "emf_error_small", "budget_worst", "budget_rss")...)
 	if t, asked := s.requirementsTable(answers); asked {
 		s.out.Tables = append(s.out.Tables, t)
 	}
