@@ -227,9 +227,69 @@ func TestBindingStudy(t *testing.T) {
 	}
 }
 
+// TestBrokenDecisionNamesTheRecord: a decision that held at the last
+// publication and fails now says which record changed.
+func TestBrokenDecisionNamesTheRecord(t *testing.T) {
+	signed := strings.Replace(copper, "alpha: 3.9e-3 /K", "alpha: 3.93e-3 /K ± 0.01e-3 /K", 1) +
+		"class: specified\ncondition: annealed\nstatus: released\nrevision: 1\nsign_off: {author: a, reviewer: b, date: 2026-01-01, reason: r, due: 2028-01-01}\n"
+	block := "# R\n\n```study: compare\nmaterials: [copper]\nwindow: 0 °C to 100 °C\nbinding: yes\nrequire: {greatest_change: 32 %}\n```\n"
+	dir := reference(t, map[string]string{"materials/sources.yaml": sources, "materials/copper.yaml": signed, "content/reports/r.md": block})
+	if code, _, errs := run("publish", "--folder", dir); code != 0 {
+		t.Fatalf("exit %d, %q", code, errs)
+	}
+	os.WriteFile(filepath.Join(dir, "materials", "copper.yaml"), []byte(strings.Replace(signed, "3.93e-3 /K ±", "4.26e-3 /K ±", 1)), 0o644)
+	report := filepath.Join(t.TempDir(), "report.json")
+	code, out, errs := run("publish", "--folder", dir, "--report", report)
+	if code != 1 || out != "" || !strings.Contains(errs, "held before copper changed") {
+		t.Errorf("exit %d, %q, %q", code, out, errs)
+	}
+	text, _ := os.ReadFile(report)
+	if !strings.Contains(string(text), `"changed": [`) || !strings.Contains(string(text), `"copper"`) {
+		t.Errorf("report %s", text)
+	}
+}
+
+// TestStudyFile runs one study without a site; its places are those of the
+// file, and a binding study that does not hold exits with 1.
+func TestStudyFile(t *testing.T) {
+	dir := yard(t)
+	file := filepath.Join(t.TempDir(), "s.yaml")
+	try := func(text string, more ...string) (int, string, string) {
+		os.WriteFile(file, []byte(text), 0o644)
+		return run(append([]string{"study", file, "--folder", dir}, more...)...)
+	}
+	good := "# a question\nstudy: compare\nmaterials: [copper]\nwindow: 0 °C to 100 °C\nrequire: {greatest_change: 50 %}\n"
+	code, out, errs := try(good, "--format", "json")
+	if code != 0 {
+		t.Fatalf("exit %d, %q", code, errs)
+	}
+	o := object(t, out)
+	wantFields(t, o, "study title parameters materials ranking cautions")
+	wantFields(t, o["materials"].([]any)[0].(map[string]any), "material verdict reasons requirements numbers tables warnings evidence")
+	if code, out, _ := try(good); code != 0 || !strings.Contains(out, "greatest change") || !strings.Contains(out, "not an approval") {
+		t.Errorf("as text: exit %d, %q", code, out)
+	}
+	for text, want := range map[string]string{
+		"materials: [copper]\nwindow: 0 °C to 100 °C\n":              "names no study",
+		strings.Replace(good, "compare", "compere", 1):            "did you mean compare?",
+		strings.Replace(good, "[copper]", "[coper]", 1):              ":3:13:",
+		strings.Replace(good, "0 °C to 100 °C", "100 °C to 0 °C", 1): ":4:9:",
+	} {
+		if code, out, errs := try(text); code != 1 || out != "" || !strings.Contains(errs, want) {
+			t.Errorf("%q: exit %d, %q, %q", text, code, out, errs)
+		}
+	}
+	if code, out, errs := try(strings.Replace(good, "50 %", "1 %", 1) + "binding: yes\n"); code != 1 || !strings.Contains(errs, "does not hold") {
+		t.Errorf("binding: exit %d, %q %q", code, out, errs)
+	}
+	if code, _, errs := run("study", filepath.Join(dir, "none.yaml"), "--folder", dir); code != 1 || errs == "" {
+		t.Errorf("no file: exit %d, %q", code, errs)
+	}
+}
+
 // TestHelp: every command has a form and an example of its own.
 func TestHelp(t *testing.T) {
-	for _, c := range []string{"publish", "examine", "value", "tcr", "fit"} {
+	for _, c := range []string{"publish", "examine", "value", "tcr", "fit", "study"} {
 		code, out, _ := run(c, "--help")
 		if code != 0 || !strings.Contains(out, "Example:") || !strings.Contains(out, "ohmfolio "+c) {
 			t.Errorf("help of %s: exit %d\n%s", c, code, out)

@@ -66,6 +66,9 @@ type failingJSON struct {
 	File     string `json:"file"`
 	Material string `json:"material"`
 	Verdict  string `json:"verdict"`
+	// Changed names the records that changed since it held, where the site
+	// published before tells.
+	Changed []string `json:"changed"`
 }
 
 func (s *session) runPublish(into, reportFile string) error {
@@ -76,7 +79,7 @@ func (s *session) runPublish(into, reportFile string) error {
 		return err
 	}
 	outcomes, findings := examineAll(lib, "")
-	rep := reportJSON{Findings: examine.JSON(findings).Findings, Failing: failing(outcomes)}
+	rep := reportJSON{Findings: examine.JSON(findings).Findings, Failing: failing(outcomes, before(into))}
 	s.printFindings(findings)
 	if n := place.Count(findings, place.Error); n > 0 {
 		fmt.Fprintf(s.err, "nothing is written: %s\n", plural(n, "error"))
@@ -108,11 +111,22 @@ func joinError(first, second error) error {
 	return second
 }
 
-func failing(outcomes []examine.Judged) []failingJSON {
+// before reads the decisions of the site as it was published last.
+func before(into string) []export.Decision {
+	text, err := os.ReadFile(filepath.Join(into, filepath.FromSlash(export.DecisionsPath)))
+	if err != nil {
+		return nil // nothing was published yet
+	}
+	return export.ReadDecisions(text)
+}
+
+func failing(outcomes []examine.Judged, before []export.Decision) []failingJSON {
 	list := []failingJSON{}
 	for _, j := range outcomes {
 		for _, m := range j.Outcome.Broken() {
-			list = append(list, failingJSON{j.Outcome.Study, j.Outcome.Title, j.Document.Source.File, m.Material, string(m.Verdict)})
+			now := export.Decision{Document: j.Document.Source.File, Title: j.Outcome.Title, Material: m.Material, Size: m.Size, Evidence: m.Evidence}
+			changed := append([]string{}, export.WhatChanged(before, now)...)
+			list = append(list, failingJSON{j.Outcome.Study, j.Outcome.Title, j.Document.Source.File, m.Material, string(m.Verdict), changed})
 		}
 	}
 	return list
@@ -121,7 +135,11 @@ func failing(outcomes []examine.Judged) []failingJSON {
 func failingText(list []failingJSON) string {
 	var parts []string
 	for _, f := range list {
-		parts = append(parts, f.Title+": "+f.Material+" "+f.Verdict)
+		text := f.Title + ": " + f.Material + " " + f.Verdict
+		if len(f.Changed) > 0 {
+			text += ", held before " + strings.Join(f.Changed, " and ") + " changed"
+		}
+		parts = append(parts, text)
 	}
 	return strings.Join(parts, "; ")
 }
@@ -174,7 +192,11 @@ func Outputs(lib *library.Library, outcomes []examine.Judged, findings []place.F
 	if err != nil {
 		return nil, err
 	}
-	return append(pages, export.Outputs(lib)...), nil
+	var decisions []export.Decision
+	for _, j := range outcomes {
+		decisions = append(decisions, export.DecisionsOf(j.Document.Source.File, j.Outcome)...)
+	}
+	return append(append(pages, export.Outputs(lib)...), export.Decisions(decisions)), nil
 }
 
 // themeOf is the built-in theme, which the folder's own themes/ overrides

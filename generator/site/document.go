@@ -5,6 +5,7 @@ import (
 	"html"
 	"html/template"
 	"path"
+	"strconv"
 	"strings"
 
 	"ohmfolio/generator/library"
@@ -20,8 +21,12 @@ type documentPage struct {
 	Heading  string
 	Contents []contentsItem
 	Body     template.HTML
+	Asked    []liveNote // what the live numbers ask, for paper
 	Cautions cautionList
 }
+
+// liveNote is one live number as a note under a printed page.
+type liveNote struct{ Mark, Text string }
 
 func (s *site) document(d *library.Document) output.Output {
 	name := "guide-page"
@@ -33,7 +38,7 @@ func (s *site) document(d *library.Document) output.Output {
 		if pagePath(d) == s.howToRead() {
 			here = pagePath(d)
 		}
-		p := documentPage{frame: s.frame(d.Page.Title, "document", "../", here), Heading: d.Page.Title, Body: s.body(d, "../")}
+		p := documentPage{frame: s.frame(d.Page.Title, "document", "../", here), Heading: d.Page.Title, Body: s.body(d, "../"), Asked: s.liveNotes(d)}
 		for _, h := range d.Page.Headings {
 			if h.Level == 2 {
 				p.Contents = append(p.Contents, contentsItem{h.ID, h.Text})
@@ -74,13 +79,37 @@ func (s *site) body(d *library.Document, root string) template.HTML {
 				s.studyPart(w, outcomes[i], d, i, root)
 			}
 		},
-		Number: func(i int) string { return s.liveNumber(d.Page.Numbers[i], root) },
-		Link:   func(_ int, target string) string { return pageTarget(d, target, root) },
+		Number: func(i int) string {
+			return s.liveNumber(d.Page.Numbers[i], root) + `<sup class="mark">` + strconv.Itoa(i+1) + "</sup>"
+		},
+		Link: func(_ int, target string) string { return pageTarget(d, target, root) },
 	})
 	if err != nil {
 		return template.HTML("<p>" + html.EscapeString(err.Error()) + "</p>")
 	}
 	return template.HTML(b.String()) // words escapes every text
+}
+
+// liveNotes tell on paper what a screen shows in the title of a live number:
+// the question, the value with its band, and the record.
+func (s *site) liveNotes(d *library.Document) []liveNote {
+	var list []liveNote
+	for i, n := range d.Page.Numbers {
+		id := statement.TargetID(n.Target)
+		text, note, ok := s.in.Answer(n.Question, n.Written, id)
+		if !ok {
+			continue
+		}
+		line := s.short(id) + ", " + n.Question + ": " + text
+		if note != "" {
+			line += "; " + note
+		}
+		if r := s.in.Library.Material(id); r != nil {
+			line += " (revision " + strconv.Itoa(r.Revision) + ", " + r.Fingerprint + ")"
+		}
+		list = append(list, liveNote{strconv.Itoa(i + 1), line})
+	}
+	return list
 }
 
 func (s *site) liveNumber(n words.LiveNumber, root string) string {

@@ -105,8 +105,8 @@ func linkTo(list []link, path string) bool {
 // decisionRow is one requirement of one study.
 type decisionRow struct {
 	Title, Path, Material, Size, Name, Requirement, Verdict, Margin, Evidence string
-	Binding                                                             bool
-	margin                                                              float64
+	Binding                                                                   bool
+	margin                                                                    float64
 }
 
 func (s *site) decisions() output.Output {

@@ -24,7 +24,7 @@ func (a *answer) judge() {
 		}
 		a.Requirements = append(a.Requirements, r)
 		a.Verdict = worse(a.Verdict, r.Verdict)
-		if r.Verdict == Fails || r.Verdict == CannotBeTold {
+		if r.Verdict == Fails || r.Verdict == CannotBeTold || r.Verdict == HoldsNominally && a.w.out.Binding {
 			a.reason(inWords(name) + " " + string(r.Verdict) + ": " + a.told(name) + " against " + bound.Text)
 		}
 	}
