@@ -271,7 +271,7 @@ func TestStudyFile(t *testing.T) {
 	}
 	for text, want := range map[string]string{
 		"materials: [copper]\nwindow: 0 °C to 100 °C\n":              "names no study",
-		strings.Replace(good, "compare", "compere", 1):            "did you mean compare?",
+		strings.Replace(good, "compare", "compere", 1):               "did you mean compare?",
 		strings.Replace(good, "[copper]", "[coper]", 1):              ":3:13:",
 		strings.Replace(good, "0 °C to 100 °C", "100 °C to 0 °C", 1): ":4:9:",
 	} {
@@ -289,7 +289,7 @@ func TestStudyFile(t *testing.T) {
 
 // TestHelp: every command has a form and an example of its own.
 func TestHelp(t *testing.T) {
-	for _, c := range []string{"publish", "examine", "value", "tcr", "fit", "study"} {
+	for _, c := range []string{"publish", "examine", "value", "tcr", "fit", "study", "export"} {
 		code, out, _ := run(c, "--help")
 		if code != 0 || !strings.Contains(out, "Example:") || !strings.Contains(out, "ohmfolio "+c) {
 			t.Errorf("help of %s: exit %d\n%s", c, code, out)

@@ -27,7 +27,7 @@ import (
 )
 
 func (s *session) publish() *cobra.Command {
-	var into, report string
+	var into, report, without string
 	c := &cobra.Command{
 		Use: "publish", Short: "Examine the reference, then write the whole site",
 		Long: `Examines everything, then writes the site. Nothing is written while a record
@@ -39,10 +39,14 @@ verdict, and the exit code is 1.`,
 			if into == "" {
 				into = filepath.Join(s.folder, "public")
 			}
-			return s.runPublish(into, report)
+			if without != "" && without != "offers" {
+				return fmt.Errorf("--without %q: only offers can be left out", without)
+			}
+			return s.runPublish(into, report, without == "offers")
 		},
 	}
 	c.Flags().StringVar(&into, "into", "", "folder for the site; public/ under --folder when not given")
+	c.Flags().StringVar(&without, "without", "", "leave out: offers, so that the site may go to customers")
 	c.Flags().StringVar(&report, "report", "", "file for a report in JSON")
 	return c
 }
@@ -71,12 +75,15 @@ type failingJSON struct {
 	Changed []string `json:"changed"`
 }
 
-func (s *session) runPublish(into, reportFile string) error {
+func (s *session) runPublish(into, reportFile string, noOffers bool) error {
 	relaxCollector()
 	start := time.Now()
 	lib, err := s.load()
 	if err != nil {
 		return err
+	}
+	if noOffers {
+		lib.LeaveOutOffers()
 	}
 	outcomes, findings := examineAll(lib, "")
 	rep := reportJSON{Findings: examine.JSON(findings).Findings, Failing: failing(outcomes, before(into))}

@@ -66,3 +66,7 @@ func csvReason(err error) string {
 	}
 	return err.Error()
 }
+
+// LeaveOutOffers forgets every price: what is computed and written afterwards
+// may go to customers.
+func (l *Library) LeaveOutOffers() { l.Offers = nil }
