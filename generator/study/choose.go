@@ -208,9 +208,49 @@ func (c *choice) show(answers []*answer) {
 	}
 	if len(short) == 0 {
 		c.note("No record holds every requirement over the whole window. " + nearest(answers))
+		for _, text := range contradictions(answers) {
+			c.note(text)
+		}
 	}
 	c.out.Listed = true
 	c.figure(short)
+}
+
+// contradictions names requirements that nothing meets, and pairs of which
+// each is met by some record and both by none.
+func contradictions(answers []*answer) []string {
+	met := map[string][]bool{} // by requirement, in the order of answers
+	var names []string
+	for i, a := range answers {
+		for _, r := range a.Requirements {
+			if met[r.Name] == nil {
+				met[r.Name] = make([]bool, len(answers))
+				names = append(names, r.Name)
+			}
+			met[r.Name][i] = r.Verdict == Holds || r.Verdict == HoldsNominally
+		}
+	}
+	var list []string
+	count := func(a, b string) (n int) {
+		for i := range answers {
+			if met[a][i] && met[b][i] {
+				n++
+			}
+		}
+		return n
+	}
+	for i, a := range names {
+		if count(a, a) == 0 {
+			list = append(list, "Nothing on record meets “"+inWords(a)+"” alone.")
+			continue
+		}
+		for _, b := range names[i+1:] {
+			if count(b, b) > 0 && count(a, b) == 0 {
+				list = append(list, "“"+inWords(a)+"” and “"+inWords(b)+"” contradict each other here: each is met by some record, both by none.")
+			}
+		}
+	}
+	return list
 }
 
 // rejected tells each material with its reasons.

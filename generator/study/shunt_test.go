@@ -239,6 +239,14 @@ func TestChoose(t *testing.T) {
 	if !strings.Contains(strings.Join(o.Notes, " "), "No record holds") {
 		t.Errorf("notes %v", o.Notes)
 	}
+	o = benched(t, "choose", "window: -40 °C to 85 °C\nstatus: any\nrequire: {greatest_change: 0.3 %, resistivity: \">= 45 µΩ·cm\"}\n")
+	if text := strings.Join(o.Notes, " "); strings.Contains(text, "contradict") {
+		t.Errorf("CuNi meets both, and the notes say %s", text)
+	}
+	o = benched(t, "choose", "window: -40 °C to 85 °C\nstatus: any\nrequire: {emf_to_copper: 5 µV/K, resistivity: \">= 45 µΩ·cm\"}\n")
+	if text := strings.Join(o.Notes, " "); !strings.Contains(text, "“emf to copper” and “resistivity” contradict") {
+		t.Errorf("the pair is not named: %s", text)
+	}
 	_, findings := bench(t, "choose", "families: [resistance aloys]\nwindow: 0 °C to 60 °C\n")
 	if len(findings) != 1 || findings[0].Code != "family-unknown" {
 		t.Errorf("%v", findings)
