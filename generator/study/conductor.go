@@ -149,7 +149,7 @@ func (w *work) count(key string, otherwise, least int) float64 {
 
 // lacking is a finding at the block: it needs one of the keys.
 func (w *work) lacking(what string, keys ...string) {
-	w.fail("parameter-missing", w.block, what, "add "+strings.Join(keys, ": or ")+":")
+	w.fail("parameter-missing", w.block, what, "add "+strings.Join(keys, ", or "))
 }
 
 // contradict is a finding at the second of two parameters.

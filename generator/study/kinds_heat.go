@@ -23,6 +23,12 @@ var heatFindings = []place.Kind{
 		Mend:        "take one of them out",
 	},
 	{
+		Code: "readings-unusable", Severity: place.Error, Title: "Readings of a cooling winding do not tell the value at switch-off",
+		Explanation: "The extrapolation needs a few readings in order of time, counted from switch-off, whose resistance falls.",
+		Trigger:     triggerFence("study: winding", "materials: [copper]\ncold_resistance: 3 Ω\ncold_temperature: 20 °C\nreadings: [{time: 30 s, resistance: 4 Ω}]"),
+		Mend:        "write the readings in order of time, or hot_resistance for one at switch-off",
+	},
+	{
 		Code: "value-not-positive", Severity: place.Error, Title: "A parameter that must be above zero is not",
 		Explanation: "Lengths, currents, voltages and powers are given as magnitudes.",
 		Trigger:     triggerFence("study: heater", "materials: [copper]\nvoltage: -24 V\npower: 60 W\nelement_temperature: 90 °C\ndiameter: 0.5 mm"),

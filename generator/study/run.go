@@ -11,7 +11,7 @@ import (
 )
 
 // kinds is the one list of studies, sorted by name.
-var kinds = []Kind{acceptanceKind.whole(), chooseKind.whole(), compareKind.whole(), heaterKind.whole(), shuntKind.whole()}
+var kinds = []Kind{acceptanceKind.whole(), chooseKind.whole(), compareKind.whole(), heaterKind.whole(), seriesKind.whole(), shuntKind.whole(), windingKind.whole()}
 
 // Kinds returns the studies in order of their names.
 func Kinds() []Kind { return append([]Kind{}, kinds...) }
