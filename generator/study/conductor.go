@@ -17,14 +17,12 @@ type section struct {
 	area, perimeter  span
 	diameter         span // of a round wire, unknown otherwise
 	thickness, width span // of a strip, unknown otherwise
-	text             string
 }
 
 func round(d span) section {
 	return section{
 		area:      d.through(func(d float64) float64 { return math.Pi / 4 * d * d }),
 		perimeter: d.scale(math.Pi), diameter: d, thickness: unknown(), width: unknown(),
-		text: "⌀ " + millimetres(d.v),
 	}
 }
 
@@ -33,7 +31,6 @@ func flat(t, w span, edges float64) section {
 	return section{
 		area: t.times(w), perimeter: t.scale(edges).plus(w).scale(2),
 		diameter: unknown(), thickness: t, width: w,
-		text: millimetres(t.v) + " × " + millimetres(w.v),
 	}
 }
 

@@ -90,6 +90,7 @@ type heater struct {
 	*work
 	voltage, power span
 	line           connection
+	aim            float64 // Ω of one element, hot: U²/P of its share of both
 	hot            float64 // K; NaN when cooling tells it
 	start          float64 // K
 	cooling        cooling
@@ -144,6 +145,8 @@ func runHeater(w *work) {
 	if w.failed {
 		return
 	}
+	u := h.elementVoltage(h.voltage).v
+	h.aim = u * u / h.elementPower()
 	h.notes()
 	var answers []*answer
 	for _, r := range records {

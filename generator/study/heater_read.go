@@ -154,23 +154,7 @@ func (c cooling) temperature(q float64) float64 {
 	for c.flux(hi) < q {
 		hi *= 2
 	}
-	return bisect(lo, hi, func(t float64) float64 { return c.flux(t) - q })
-}
-
-// bisect finds where a rising function crosses zero in [lo, hi].
-func bisect(lo, hi float64, f func(float64) float64) float64 {
-	for range 200 {
-		mid := lo + (hi-lo)/2
-		if mid <= lo || mid >= hi {
-			break
-		}
-		if f(mid) < 0 {
-			lo = mid
-		} else {
-			hi = mid
-		}
-	}
-	return lo + (hi-lo)/2
+	return root(lo, hi, func(t float64) float64 { return c.flux(t) - q })
 }
 
 // notes tells what is assumed.

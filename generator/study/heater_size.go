@@ -21,12 +21,6 @@ type element struct {
 	from     string  // where the size comes from
 }
 
-// aim is the resistance of one element, hot: U²/P of its share of both.
-func (h *heater) aim() float64 {
-	u, p := h.elementVoltage(h.voltage).v, h.elementPower()
-	return u * u / p
-}
-
 func (h *heater) elementVoltage(u span) span { return u.scale(h.line.voltage) }
 
 func (h *heater) elementPower() float64 { return h.power.v / h.line.elements }
@@ -82,7 +76,7 @@ func (e *element) ideal() (section, bool) {
 		}
 		f := e.factorValue(t)
 		if byLength {
-			return s.area.v - float64(e.rho.v*(e.h.length.v*f+e.h.leads.resisting()))/e.h.aim()
+			return s.area.v - float64(e.rho.v*(e.h.length.v*f+e.h.leads.resisting()))/e.h.aim
 		}
 		l := e.lengthFor(s.area.v, f)
 		return s.perimeter.v*l - e.h.elementPower()/load
@@ -91,7 +85,13 @@ func (e *element) ideal() (section, bool) {
 		e.a.factorAt(hot) // tells why
 		return section{}, false
 	}
-	x := bisect(1e-7, 1, func(x float64) float64 { return short(e.shaped(x)) })
+	x := root(1e-7, 1, func(x float64) float64 {
+		d := short(e.shaped(x))
+		if math.IsNaN(d) {
+			return -1 // hotter than the data reach: too thin
+		}
+		return d
+	})
 	s := e.shaped(x)
 	if d := short(s); math.IsNaN(d) || x > 0.9 {
 		e.a.cannot("no size of this material meets what is asked within its valid range")
@@ -135,7 +135,7 @@ func (e *element) factorValue(t float64) float64 {
 // lengthFor is the heated length of a section of that area that gives the
 // resistance aimed at, the lead-ins' share taken off.
 func (e *element) lengthFor(area, factor float64) float64 {
-	return (float64(e.h.aim()*area)/e.rho.v - e.h.leads.resisting()) / factor
+	return (float64(e.h.aim*area)/e.rho.v - e.h.leads.resisting()) / factor
 }
 
 // take builds with the stock size that suits, or with the ideal one.
@@ -243,7 +243,7 @@ func (e *element) build(s section, stock *material.Stock) bool {
 
 // lengthAt is the heated length that gives the resistance aimed at.
 func (e *element) lengthAt(factor float64) float64 {
-	return (e.h.aim()/e.perMetre.v - e.h.leads.resisting()) / factor
+	return (e.h.aim/e.perMetre.v - e.h.leads.resisting()) / factor
 }
 
 // settle finds the temperature of the built element: the one assumed, or where
@@ -275,7 +275,7 @@ func (e *element) settle() bool {
 	case excess(lo) > 0:
 		e.a.cannot("the element stays below " + quantity.CelsiusText(lo) + ", where the valid range begins")
 	default:
-		e.hot = bisect(lo, hi, excess)
+		e.hot = root(lo, hi, excess)
 		return true
 	}
 	return false

@@ -71,6 +71,8 @@ type winding struct {
 	r1, t1       span
 	r2           span
 	readings     []reading
+	fitted       cooled // the exponential through them, the same for every material
+	unfit        string // why there is none
 	coolant      span
 	constant     string
 }
@@ -84,6 +86,9 @@ func runWinding(w *work) {
 	records := w.records("materials")
 	if w.failed {
 		return
+	}
+	if len(g.readings) > 0 && g.text("extrapolation", exponential) == exponential {
+		g.fitted, g.unfit = fitExponential(g.readings)
 	}
 	g.notes()
 	var answers []*answer

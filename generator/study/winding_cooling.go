@@ -17,7 +17,7 @@ func (c cooled) at(t float64) float64 { return c.end + float64(c.above*math.Exp(
 // straight line on log takes the resistance at the coolant's temperature for it.
 func (x *wound) extrapolate() (cooled, string) {
 	if x.g.text("extrapolation", exponential) == exponential {
-		return fitExponential(x.g.readings)
+		return x.g.fitted, x.g.unfit
 	}
 	end := x.g.r1.over(x.law.factor(x.g.t1)).times(x.law.factor(x.g.coolant)).v
 	if math.IsNaN(end) {

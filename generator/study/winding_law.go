@@ -120,7 +120,7 @@ func (l law) inverse(ratio, t1 float64, take func(span) float64) float64 {
 	if a, b := at(lo), at(hi); !(a <= 1e-12 && b >= -1e-12) {
 		return math.NaN()
 	}
-	return bisect(lo, hi, at)
+	return root(lo, hi, at)
 }
 
 // rises tells whether the own curve rises all over its range.

@@ -157,7 +157,7 @@ func (g *winding) notes() {
 		g.note("The bare diameter is that over the enamel less the enamel on both sides. Winding tension thins the wire and raises R; that is not in the numbers.")
 	}
 	if g.has("gauge") {
-		g.note("The gauge is taken at its exact diameter, " + g.wire.text + "; its tolerance is not in the band.")
+		g.note("The gauge is taken at its exact diameter, " + millimetres(g.wire.diameter.v) + "; its tolerance is not in the band.")
 	}
 	if g.conductivity.known() {
 		g.note("The conductivity of the wire replaces the resistivity of the record. The change of ρ with temperature stays that of the record (Matthiessen's rule), so the coefficient falls with the conductivity.")
