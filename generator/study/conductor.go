@@ -34,11 +34,6 @@ func flat(t, w span, edges float64) section {
 	}
 }
 
-func millimetres(si float64) string {
-	u, _ := quantity.FindUnit(quantity.Length, "mm")
-	return quantity.Number(u.FromSI(si), 3) + quantity.NarrowSpace + "mm"
-}
-
 // recorded is a value of a record: without limits its ± is unknown.
 func recorded(q *quantity.Quantity) span {
 	switch {
@@ -50,18 +45,10 @@ func recorded(q *quantity.Quantity) span {
 	return nominal(q.Value)
 }
 
-// density of a record, unknown when it has none.
-func density(r *material.Record) span {
-	if p := r.Property("density"); p != nil {
-		return recorded(&p.Value)
-	}
-	return unknown()
-}
-
 // tellMass adds the mass of a volume of the record's material.
 func (a *answer) tellMass(volume span) {
-	d := density(a.Record)
-	if !d.known() {
+	d, ok := a.property("density")
+	if !ok {
 		a.cannot("no density")
 		return
 	}

@@ -148,10 +148,7 @@ func runHeater(w *work) {
 	u := h.elementVoltage(h.voltage).v
 	h.aim = u * u / h.elementPower()
 	h.notes()
-	var answers []*answer
-	for _, r := range records {
-		answers = append(answers, h.size(r))
-	}
+	answers := w.each(records, func(r *material.Record) []*answer { return []*answer{h.size(r)} })
 	w.finish(answers)
 	h.tables(answers)
 	h.chart(answers)
@@ -160,7 +157,7 @@ func runHeater(w *work) {
 // size answers for one material.
 func (h *heater) size(r *material.Record) *answer {
 	a := h.about(r)
-	e := &element{h: h, a: a, rho: a.rhoAt20()}
+	e := &heating{h: h, a: a, rho: a.rhoAt20()}
 	if e.rho.known() && e.design() {
 		e.tell()
 	}

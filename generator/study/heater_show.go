@@ -8,7 +8,7 @@ import (
 )
 
 // tell names the numbers of a finished design.
-func (e *element) tell() {
+func (e *heating) tell() {
 	h, a := e.h, e.a
 	lead := exactly(h.leads.resisting())
 	cold := e.perMetre.times(e.length.plus(lead))
@@ -55,7 +55,7 @@ func end(band span, at float64) span {
 }
 
 // tellInrush: the greatest line current at the start temperature.
-func (e *element) tellInrush() {
+func (e *heating) tellInrush() {
 	start := e.a.factorAt(e.h.start)
 	if !start.known() {
 		return
@@ -69,7 +69,7 @@ func (e *element) tellInrush() {
 }
 
 // tellService holds the element against the material's service temperature.
-func (e *element) tellService() {
+func (e *heating) tellService() {
 	p := e.a.Record.Property("service_temperature")
 	limit := unknown()
 	switch {
@@ -89,7 +89,7 @@ func (e *element) tellService() {
 	}
 }
 
-func (e *element) warnings() {
+func (e *heating) warnings() {
 	a := e.a
 	load := a.spans["surface_load"].v
 	if goal := e.target(); load > goal*(1+1e-6) {
@@ -149,8 +149,12 @@ func findBuild(name string) (build, bool) {
 // tables: what to draw and wind; what it draws; R(T)/R at 20 °C.
 func (h *heater) tables(answers []*answer) {
 	h.out.Tables = append(h.out.Tables,
-		h.numbersTable("The element", answers, "diameter", "thickness", "width", "resistance_per_length", "length", "wire_length", "resistance_cold", "temperature_factor", "resistance_hot", "mass"),
+		h.numbersTables("The element", answers, "diameter", "thickness", "width", "resistance_per_length", "length", "wire_length", "resistance_cold", "temperature_factor", "resistance_hot", "mass")...)
+	h.out.Tables = append(h.out.Tables,
 		h.numbersTable("What it draws", answers, "element_temperature", "service_margin", "surface_load", "power", "power_min", "power_max", "inrush_current"))
+	if t, asked := h.requirementsTable(answers); asked {
+		h.out.Tables = append(h.out.Tables, t)
+	}
 	if t, ok := h.factors(answers); ok {
 		h.out.Tables = append(h.out.Tables, t)
 	}

@@ -7,8 +7,8 @@ import (
 	"ohmfolio/generator/quantity"
 )
 
-// element is the design of one element in one material.
-type element struct {
+// heating is the design of one element in one material.
+type heating struct {
 	h *heater
 	a *answer
 
@@ -26,7 +26,7 @@ func (h *heater) elementVoltage(u span) span { return u.scale(h.line.voltage) }
 func (h *heater) elementPower() float64 { return h.power.v / h.line.elements }
 
 // design finds section, temperature and length; false when one cannot be told.
-func (e *element) design() bool {
+func (e *heating) design() bool {
 	if e.h.chosen != nil {
 		e.from = "chosen"
 		if s := e.held(*e.h.chosen); s != nil {
@@ -46,7 +46,7 @@ func (e *element) design() bool {
 // held is the stock size that was chosen by its nominal size, whose limits
 // and resistance per metre then hold; nil when there is none, or when the
 // choice has limits of its own.
-func (e *element) held(chosen section) *material.Stock {
+func (e *heating) held(chosen section) *material.Stock {
 	if !e.fromStock() || chosen.area.wide() {
 		return nil
 	}
@@ -59,10 +59,10 @@ func (e *element) held(chosen section) *material.Stock {
 	return nil
 }
 
-func (e *element) fromStock() bool { return !e.h.has("stock") || e.h.block.Get("stock").Yes() }
+func (e *heating) fromStock() bool { return !e.h.has("stock") || e.h.block.Get("stock").Yes() }
 
 // ideal is the section that meets the load or the length exactly.
-func (e *element) ideal() (section, bool) {
+func (e *heating) ideal() (section, bool) {
 	byLength := e.h.length.known()
 	load := e.target()
 	hot := e.h.hot
@@ -102,7 +102,7 @@ func (e *element) ideal() (section, bool) {
 
 // target is the surface load to size for: the lower one of what is asked and
 // what the cooling carries at the temperature asked.
-func (e *element) target() float64 {
+func (e *heating) target() float64 {
 	load := e.h.load
 	if e.h.cooling.any() && !math.IsNaN(e.h.hot) {
 		if q := e.h.cooling.flux(e.h.hot); math.IsNaN(load) || q < load {
@@ -114,7 +114,7 @@ func (e *element) target() float64 {
 
 // shaped is the section of free dimension x: the diameter, the width of a
 // strip of given thickness, or the thickness of one of given proportion.
-func (e *element) shaped(x float64) section {
+func (e *heating) shaped(x float64) section {
 	switch {
 	case !e.h.flat:
 		return round(nominal(x))
@@ -125,7 +125,7 @@ func (e *element) shaped(x float64) section {
 }
 
 // factorValue is the nominal R(t)/R(20 °C), NaN without one.
-func (e *element) factorValue(t float64) float64 {
+func (e *heating) factorValue(t float64) float64 {
 	if e.a.Record.Adopted == nil {
 		return math.NaN()
 	}
@@ -134,12 +134,12 @@ func (e *element) factorValue(t float64) float64 {
 
 // lengthFor is the heated length of a section of that area that gives the
 // resistance aimed at, the lead-ins' share taken off.
-func (e *element) lengthFor(area, factor float64) float64 {
+func (e *heating) lengthFor(area, factor float64) float64 {
 	return (float64(e.h.aim*area)/e.rho.v - e.h.leads.resisting()) / factor
 }
 
 // take builds with the stock size that suits, or with the ideal one.
-func (e *element) take(ideal section) bool {
+func (e *heating) take(ideal section) bool {
 	var best *material.Stock
 	if e.fromStock() {
 		best = e.suits(ideal)
@@ -163,7 +163,7 @@ func (h *heater) formWord() string {
 
 // suits finds the stock size next to the ideal one: by load, the smallest
 // whose load is no higher, else the largest; by length, the nearest.
-func (e *element) suits(ideal section) *material.Stock {
+func (e *heating) suits(ideal section) *material.Stock {
 	var above, below, near *material.Stock
 	var aboveSize, belowSize, nearest float64
 	goal := e.sizeOf(ideal)
@@ -195,9 +195,9 @@ func (e *element) suits(ideal section) *material.Stock {
 
 // sizeOf orders sections by surface load: the load at given R falls as
 // perimeter × area rises.
-func (e *element) sizeOf(s section) float64 { return float64(s.perimeter.v * s.area.v) }
+func (e *heating) sizeOf(s section) float64 { return float64(s.perimeter.v * s.area.v) }
 
-func (e *element) fits(s *material.Stock) bool {
+func (e *heating) fits(s *material.Stock) bool {
 	if e.h.flat {
 		return (s.Form == strip || s.Form == "foil") && s.Thickness != nil && s.Width != nil &&
 			(!e.h.thickness.known() || math.Abs(s.Thickness.Value/e.h.thickness.v-1) < 1e-3)
@@ -205,7 +205,7 @@ func (e *element) fits(s *material.Stock) bool {
 	return s.Form == wire && s.Diameter != nil
 }
 
-func (e *element) sectionOf(s material.Stock) section {
+func (e *heating) sectionOf(s material.Stock) section {
 	if e.h.flat {
 		return flat(recorded(s.Thickness), recorded(s.Width), e.h.edges)
 	}
@@ -213,7 +213,7 @@ func (e *element) sectionOf(s material.Stock) section {
 }
 
 // build fixes the section and solves length and temperature for it.
-func (e *element) build(s section, stock *material.Stock) bool {
+func (e *heating) build(s section, stock *material.Stock) bool {
 	e.section = s
 	e.perMetre = e.rho.over(s.area)
 	if stock != nil && stock.Resistance != nil {
@@ -242,13 +242,13 @@ func (e *element) build(s section, stock *material.Stock) bool {
 }
 
 // lengthAt is the heated length that gives the resistance aimed at.
-func (e *element) lengthAt(factor float64) float64 {
+func (e *heating) lengthAt(factor float64) float64 {
 	return (e.h.aim/e.perMetre.v - e.h.leads.resisting()) / factor
 }
 
 // settle finds the temperature of the built element: the one assumed, or where
 // the cooling carries off the surface load.
-func (e *element) settle() bool {
+func (e *heating) settle() bool {
 	if !e.h.cooling.any() {
 		e.hot = e.h.hot
 		return true

@@ -13,10 +13,10 @@ import (
 	"ohmfolio/generator/place"
 )
 
-// bench has the alloys of the worked examples: a textbook wire of constant
+// workshop has the alloys of the worked examples: a textbook wire of constant
 // resistivity at several values, NiCr8020 with the factors of GB/T 1234, wire
 // in stock.
-func bench(fence, block string) *library.Library {
+func workshop(fence, block string) *library.Library {
 	head := "name: X\nsource: s\nbasis: resistance\nreference_temperature: 20 °C\n"
 	constant := func(rho string) []byte {
 		return []byte(head + "resistivity: " + rho + "\nalpha: 0 ppm/K\nvalid_range: 0 °C to 1300 °C\nproperties: {density: {value: 8.4 g/cm³, source: s}, service_temperature: {continuous: 1200 °C, source: s}}\n")
@@ -37,7 +37,7 @@ func bench(fence, block string) *library.Library {
 
 func studied(t *testing.T, fence, block string) (*Outcome, []place.Finding) {
 	t.Helper()
-	lib := bench(fence, block)
+	lib := workshop(fence, block)
 	if place.Count(lib.Findings, place.Error) > 0 {
 		t.Fatal(lib.Findings)
 	}

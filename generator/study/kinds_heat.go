@@ -28,10 +28,4 @@ var heatFindings = []place.Kind{
 		Trigger:     triggerFence("study: winding", "materials: [copper]\ncold_resistance: 3 Ω\ncold_temperature: 20 °C\nreadings: [{time: 30 s, resistance: 4 Ω}]"),
 		Mend:        "write the readings in order of time, or hot_resistance for one at switch-off",
 	},
-	{
-		Code: "value-not-positive", Severity: place.Error, Title: "A parameter that must be above zero is not",
-		Explanation: "Lengths, currents, voltages and powers are given as magnitudes.",
-		Trigger:     triggerFence("study: heater", "materials: [copper]\nvoltage: -24 V\npower: 60 W\nelement_temperature: 90 °C\ndiameter: 0.5 mm"),
-		Mend:        "write a value above zero",
-	},
 }

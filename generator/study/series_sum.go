@@ -135,6 +135,10 @@ func (s *series) show(a *answer, sum *material.DataSet) {
 	t := s.numbersTable("The series", []*answer{a}, "resistance", "alpha_effective", "beta_effective", "change_cold", "change_hot", "greatest_change", "greatest_at", "turning_point")
 	t.Heads[0], t.Links = "series", nil
 	s.out.Tables = append(s.out.Tables, t)
+	if t, asked := s.requirementsTable([]*answer{a}); asked {
+		t.Heads[0], t.Links = "series", nil
+		s.out.Tables = append(s.out.Tables, t)
+	}
 	if sum == nil {
 		return
 	}

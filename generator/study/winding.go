@@ -16,7 +16,7 @@ const (
 	latestReading = 30.0 // s
 )
 
-var readingShape = &form.Shape{Name: "reading", Doc: "One reading while the winding cools.", Fields: []form.Field{
+var coolingShape = &form.Shape{Name: "cooling", Doc: "One reading while the winding cools.", Fields: []form.Field{
 	needed("time", form.Quantity(quantity.Time), "Time since switch-off.", "20 s"),
 	needed("resistance", form.Quantity(quantity.Resistance), "Resistance read.", "4.20 Ω"),
 }}
@@ -42,7 +42,7 @@ var windingKind = Kind{
 		field("cold_resistance", form.Quantity(quantity.Resistance), "Resistance of the cold winding.", "3.42 Ω"),
 		field("cold_temperature", form.Quantity(quantity.Temperature), "Temperature of the winding at the cold reading.", "20 °C"),
 		field("hot_resistance", form.Quantity(quantity.Resistance), "Resistance at switch-off.", "4.22 Ω"),
-		field("readings", form.List(form.Mapping(readingShape)), "Readings while the winding cools, extrapolated to switch-off.", "[{time: 20 s, resistance: 4.20 Ω}]"),
+		field("readings", form.List(form.Mapping(coolingShape)), "Readings while the winding cools, extrapolated to switch-off.", "[{time: 20 s, resistance: 4.20 Ω}]"),
 		field("extrapolation", form.OneOf(exponential, logarithmic), "How the readings are extrapolated; exponential when it is missing.", logarithmic),
 		field("coolant", form.Quantity(quantity.Temperature), "Temperature of the coolant or the ambient air at the end.", "23 °C"),
 		field("constant", form.OneOf(ownConstant, "234.5", "235", "225", "228"), "The material's own R(T), or a zero-resistance temperature below 0 °C: 234.5 or 235 for copper, 225 or 228 for aluminium. Own when it is missing.", "235"),
@@ -186,7 +186,9 @@ func (x *wound) tellHot() {
 			return
 		}
 		x.hot = nominal(c.at(0))
-		a.Tables = append(a.Tables, c.table(g.readings))
+		if g.fitted.tau == 0 { // of this material alone
+			a.Tables = append(a.Tables, c.table(g.readings))
+		}
 		x.drawn(c)
 	}
 	if !x.hot.known() {

@@ -140,15 +140,15 @@ func (x *wound) drawn(c cooled) {
 
 // tables: the numbers; R over temperature; what another constant would make of it.
 func (g *winding) tables(answers []*answer) {
-	tables := []Table{g.numbersTable("The winding", answers, "length", "mass", "resistance_20", "against_computed", "resistance_hot", "temperature", "rise", "zero_resistance_temperature")}
+	tables := g.numbersTables("The winding", answers, "length", "mass", "resistance_20", "against_computed", "resistance_hot", "temperature", "rise", "zero_resistance_temperature")
 	if t := g.constants(answers); len(t.Rows) > 1 {
 		tables = append(tables, t)
 	}
-	for _, a := range answers {
-		tables = append(tables, a.Tables...)
-		if len(a.Tables) > 0 {
-			break
-		}
+	if g.fitted.tau > 0 {
+		tables = append(tables, g.fitted.table(g.readings))
+	}
+	if t, asked := g.requirementsTable(answers); asked {
+		tables = append(tables, t)
 	}
 	g.out.Tables = append(g.out.Tables, tables...)
 }
