@@ -6,6 +6,7 @@ const (
 	CautionNotApproval = "A verdict is a calculation from recorded values, not an approval. Verify by test."
 	CautionCodes       = "Local codes, the applicable product standards and licensed practice come first."
 	CautionHot         = "Conductors that carry large currents and heating elements get hot enough to burn skin and to start a fire. Computed temperatures are averages; hot spots are hotter."
+	CautionHeater      = "Every heater has an independent over-temperature cut-out and earth-fault protection."
 	CautionIsolate     = "Isolate, lock out and discharge before measuring."
 	CautionBattery     = "Battery circuits: mind the prospective fault current and the direct-current arc; fuse the sense leads at the tap."
 	CautionInductive   = "Breaking current in an inductive winding makes dangerous voltage: let it decay, and discharge before touching a terminal."

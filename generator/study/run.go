@@ -11,7 +11,7 @@ import (
 )
 
 // kinds is the one list of studies, sorted by name.
-var kinds = []Kind{acceptanceKind.whole(), chooseKind.whole(), compareKind.whole(), shuntKind.whole()}
+var kinds = []Kind{acceptanceKind.whole(), chooseKind.whole(), compareKind.whole(), heaterKind.whole(), seriesKind.whole(), shuntKind.whole(), windingKind.whole()}
 
 // Kinds returns the studies in order of their names.
 func Kinds() []Kind { return append([]Kind{}, kinds...) }
@@ -48,7 +48,7 @@ var FindingKinds = append([]place.Kind{
 		Trigger:     trigger("materials: [copper]\nwindow: 100 °C to 0 °C"),
 		Mend:        "write the lower temperature first",
 	},
-}, append(acceptanceFindings, shuntFindings...)...)
+}, append(append(acceptanceFindings, shuntFindings...), heatFindings...)...)
 
 // triggerRecord is the smallest record that a study can work on.
 const triggerRecord = `-- materials/sources.yaml --
