@@ -72,7 +72,7 @@ func (s *site) partOf(o *study.Outcome, d *library.Document, i int, root string)
 		p.Figures = append(p.Figures, chartFigure(c, fmt.Sprintf("%s-%d-%d", d.Stem, i+1, n+1)))
 	}
 	for _, t := range o.Tables {
-		p.Tables = append(p.Tables, s.studyTable(t, root))
+		p.Tables = append(p.Tables, s.studyTable(t, o.Title, root))
 	}
 	for _, ranked := range o.Ranking {
 		p.Ranking = append(p.Ranking, s.rankedLink(ranked, root))
@@ -132,7 +132,7 @@ func (s *site) addAnswer(p *studyPart, m study.MaterialOutcome, root string) {
 		}
 	}
 	for _, t := range m.Tables {
-		p.Own = append(p.Own, s.studyTable(t, root))
+		p.Own = append(p.Own, s.studyTable(t, p.O.Title, root))
 	}
 }
 
@@ -242,8 +242,8 @@ func chartFigure(c study.Chart, id string) *figure.Figure {
 	return f
 }
 
-func (s *site) studyTable(t study.Table, root string) template.HTML {
-	var w tableWriter
+func (s *site) studyTable(t study.Table, of, root string) template.HTML {
+	w := tableWriter{of: of}
 	w.begin(t.Caption, t.Heads, firstRow(t.Rows))
 	for i, row := range t.Rows {
 		first := ""

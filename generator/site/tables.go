@@ -14,11 +14,17 @@ const wideCell = 24
 
 // tableWriter writes one table. Tables are the bulk of a page; writing them
 // here, every text escaped, is ten times faster than template loops.
-type tableWriter struct{ b strings.Builder }
+type tableWriter struct {
+	b  strings.Builder
+	of string // what the table belongs to, where a page has several of one caption
+}
 
 func (t *tableWriter) begin(caption string, heads []string, first []string) {
 	t.b.WriteString(`<div class="scroll" tabindex="0" role="region" aria-label="`)
 	t.text(plainLabel(caption, heads))
+	if t.of != "" {
+		t.text(", " + t.of)
+	}
 	t.b.WriteString(`"><table>`)
 	if caption != "" {
 		t.b.WriteString("<caption>")
