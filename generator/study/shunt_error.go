@@ -196,9 +196,6 @@ func (e *element) emf() {
 		e.a.cannot("EMF error: no thermal EMF to copper")
 		return
 	}
-	if math.IsNaN(emf.v) {
-		emf.v = emf.hi
-	}
 	error := emf.times(difference).over(e.current.times(e.target))
 	e.a.tell("emf_error_full", error)
 	if small, ok := e.quantity("smallest_current"); ok {
