@@ -229,3 +229,23 @@ func written(t testing.TB, s *Statement) []byte {
 	}
 	return b.Bytes()
 }
+
+// TestSizes: one material judged in several sizes is compared size by size.
+func TestSizes(t *testing.T) {
+	x := func(v float64) *float64 { return &v }
+	state := func(thin, thick string, margin float64) *Statement {
+		return &Statement{Studies: []Study{{Study: "shunt", Title: "A shunt", Document: "report/x.html", Materials: []Verdict{
+			{Material: "m", Size: "1 mm", Verdict: thin, Requirements: []study.Requirement{{Margin: x(0.5)}, {Margin: x(margin)}}},
+			{Material: "m", Size: "2 mm", Verdict: thick, Requirements: []study.Requirement{{Margin: nil}}}}}}}
+	}
+	r := Compare(state("holds", "fails", 0.1), state("holds", "cannot be told", 0.05), "old", "new")
+	if len(r.Verdicts) != 1 || r.Verdicts[0].Size != "2 mm" || r.Verdicts[0].New != "cannot be told" || r.Verdicts[0].MarginOld != nil {
+		t.Errorf("%+v", r.Verdicts)
+	}
+	if len(r.Margins) != 1 || r.Margins[0].Size != "1 mm" || *r.Margins[0].MarginNew != 0.05 {
+		t.Errorf("%+v", r.Margins)
+	}
+	if r := Compare(state("holds", "fails", 0.1), &Statement{}, "old", "new"); len(r.Studies) != 1 || r.Studies[0].Change != Removed {
+		t.Errorf("%+v", r.Studies)
+	}
+}

@@ -70,9 +70,9 @@ func restsOn(lib *library.Library, d *library.Document, judged []*study.Outcome)
 }
 
 func freezeStudy(o *study.Outcome, path string) Study {
-	s := Study{Study: o.Study, Title: o.Title, Document: path, Binding: o.Binding, Parameters: append([]study.Parameter{}, o.Parameters...), Materials: []Verdict{}}
+	s := Study{Study: o.Study, Title: o.Title, Document: path, Binding: o.Binding, NotHeld: len(o.Broken()), Parameters: append([]study.Parameter{}, o.Parameters...), Materials: []Verdict{}}
 	for _, m := range o.Materials {
-		s.Materials = append(s.Materials, Verdict{Material: m.Material, Verdict: string(m.Verdict),
+		s.Materials = append(s.Materials, Verdict{Material: m.Material, Size: m.Size, Verdict: string(m.Verdict),
 			Requirements: append([]study.Requirement{}, m.Requirements...), Evidence: append([]study.Evidence{}, m.Evidence...)})
 	}
 	return s

@@ -1,7 +1,5 @@
 package changes
 
-import "ohmfolio/generator/study"
-
 // An Entry of a material's history: what one statement says that the one
 // before did not.
 type Entry struct {
@@ -110,11 +108,7 @@ func Rows(editions []*Statement) []Row {
 func (s *Statement) failing() int {
 	n := 0
 	for _, o := range s.Studies {
-		for _, m := range o.Materials {
-			if o.Binding && m.Verdict != string(study.Holds) && m.Verdict != string(study.NotAsked) {
-				n++
-			}
-		}
+		n += o.NotHeld
 	}
 	return n
 }

@@ -248,11 +248,14 @@ func (r *Report) flipText(b *strings.Builder, head string, list []Flip) {
 	}
 	for i := range list {
 		f := &list[i]
-		note := ""
+		note, name := "", f.Material
+		if f.Size != "" {
+			name += ", " + f.Size
+		}
 		if f.Parameters {
 			note = "; the question itself has changed"
 		}
-		fmt.Fprintf(b, "  %s, %s: %s → %s, margin %s → %s (%s%s)\n", f.Title, f.Material, Shown(f.Old), Shown(f.New), MarginText(f.MarginOld), MarginText(f.MarginNew), f.Document, note)
+		fmt.Fprintf(b, "  %s, %s: %s → %s, margin %s → %s (%s%s)\n", f.Title, name, Shown(f.Old), Shown(f.New), MarginText(f.MarginOld), MarginText(f.MarginNew), f.Document, note)
 	}
 }
 

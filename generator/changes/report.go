@@ -82,6 +82,7 @@ type Flip struct {
 	Document   string   `json:"document"`
 	Binding    bool     `json:"binding"`
 	Material   string   `json:"material"`
+	Size       string   `json:"size,omitempty"`
 	Old        string   `json:"old"`
 	New        string   `json:"new"`
 	MarginOld  *float64 `json:"margin_old"` // smallest of its requirements; null when it cannot be told

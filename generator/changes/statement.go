@@ -83,6 +83,7 @@ type Study struct {
 	Title      string            `json:"title"`
 	Document   string            `json:"document"` // "report/x.html"
 	Binding    bool              `json:"binding"`
+	NotHeld    int               `json:"not_held"` // answers by which a binding decision does not hold
 	Parameters []study.Parameter `json:"parameters"`
 	Materials  []Verdict         `json:"materials"`
 }
@@ -90,6 +91,7 @@ type Study struct {
 // Verdict is what a study said of one material.
 type Verdict struct {
 	Material     string              `json:"material"`
+	Size         string              `json:"size,omitempty"` // where one material is judged in several sizes
 	Verdict      string              `json:"verdict"`
 	Requirements []study.Requirement `json:"requirements"`
 	Evidence     []study.Evidence    `json:"evidence"`

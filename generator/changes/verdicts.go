@@ -6,12 +6,6 @@ import (
 	"strconv"
 )
 
-// judgement is one study's word on one material.
-type judgement struct {
-	study   *Study
-	verdict *Verdict
-}
-
 // verdicts compares what the studies of both statements say of each material.
 func (r *Report) verdicts(old, now *Statement) {
 	was := map[string]string{} // ID in the old statement by the one in the new
@@ -69,14 +63,14 @@ func (r *Report) study(old, now *Study, was map[string]string) {
 		if w, ok := was[id]; ok {
 			id = w
 		}
-		o := old.of(id)
+		o := old.of(id, n.Size)
 		if o == nil {
-			o = old.of(n.Material) // a document may still say the earlier ID
+			o = old.of(n.Material, n.Size) // a document may still say the earlier ID
 		}
 		if o == nil {
 			continue
 		}
-		f := Flip{Study: now.Study, Title: now.Title, Document: now.Document, Binding: now.Binding, Material: n.Material, Old: o.Verdict, New: n.Verdict,
+		f := Flip{Study: now.Study, Title: now.Title, Document: now.Document, Binding: now.Binding, Material: n.Material, Size: n.Size, Old: o.Verdict, New: n.Verdict,
 			MarginOld: o.margin(), MarginNew: n.margin(), Parameters: !asked}
 		switch {
 		case f.Old != f.New:
@@ -87,9 +81,9 @@ func (r *Report) study(old, now *Study, was map[string]string) {
 	}
 }
 
-func (s *Study) of(id string) *Verdict {
+func (s *Study) of(id, size string) *Verdict {
 	for i := range s.Materials {
-		if s.Materials[i].Material == id {
+		if s.Materials[i].Material == id && s.Materials[i].Size == size {
 			return &s.Materials[i]
 		}
 	}

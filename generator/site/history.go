@@ -154,6 +154,9 @@ func (s *site) flips(list []changes.Flip) []flipRow {
 		if s.in.Library.Material(f.Material) != nil {
 			row.Material = "material/" + f.Material + ".html"
 		}
+		if f.Size != "" {
+			row.Name += ", " + f.Size
+		}
 		if f.Parameters {
 			row.Note = "the question itself has changed"
 		}
