@@ -82,14 +82,14 @@ func TestOpenedAndRead(t *testing.T) {
 
 func TestDamage(t *testing.T) {
 	text := written(t, frozen(t, one(copper), report))
-	for i := range text {
+	for i := 0; i < len(text); i += 3 {
 		broken := bytes.Clone(text)
 		broken[i] ^= 1
 		if _, err := Read(broken); err == nil && broken[i] != text[i] && i < len(text)-3 {
 			t.Fatalf("byte %d, %q for %q: read all the same", i, broken[i], text[i])
 		}
 	}
-	for i := range len(text) - 3 {
+	for i := 0; i < len(text)-3; i += 5 {
 		if _, err := Read(text[:i]); err == nil {
 			t.Fatalf("cut off after %d bytes and read all the same", i)
 		}

@@ -85,7 +85,7 @@ type Flip struct {
 	Size       string   `json:"size,omitempty"`
 	Old        string   `json:"old"`
 	New        string   `json:"new"`
-	MarginOld  *float64 `json:"margin_old"` // smallest of its requirements; null when it cannot be told
+	MarginOld  *float64 `json:"margin_old"` // smallest of its requirements that can be told; null when none can
 	MarginNew  *float64 `json:"margin_new"`
 	Parameters bool     `json:"parameters_changed"` // the question itself is another one
 }

@@ -90,14 +90,14 @@ func (s *Study) of(id, size string) *Verdict {
 	return nil
 }
 
-// margin is the smallest of the requirements; nil when one cannot be told.
+// margin is the smallest of the requirements that can be told; nil when none
+// can.
 func (v *Verdict) margin() *float64 {
 	least := math.Inf(1)
 	for _, r := range v.Requirements {
-		if r.Margin == nil {
-			return nil
+		if r.Margin != nil {
+			least = math.Min(least, *r.Margin)
 		}
-		least = math.Min(least, *r.Margin)
 	}
 	return finite(least)
 }

@@ -46,7 +46,9 @@ func stated(c *changes.Change) []changes.Line {
 // editionRow is one edition in the list.
 type editionRow struct {
 	changes.Row
-	Counts string
+	Counts    string
+	Verdicts  []flipRow
+	Documents []affectedRow
 }
 
 func (s *site) editions() output.Output {
@@ -54,9 +56,9 @@ func (s *site) editions() output.Output {
 		var rows []editionRow
 		if s.in.Editions != nil {
 			for _, e := range s.in.Editions() {
-				row := editionRow{e, "the first edition"}
+				row := editionRow{Row: e, Counts: "the first edition"}
 				if e.Report != nil {
-					row.Counts = e.Report.Counts()
+					row.Counts, row.Verdicts, row.Documents = e.Report.Counts(), s.flips(e.Report.Verdicts), s.affected(e.Report.Documents)
 				}
 				rows = append(rows, row)
 			}
