@@ -85,3 +85,41 @@ func BenchmarkPublishDemo(b *testing.B) { benchmarkPublish(b, "../..") }
 // BenchmarkPublish2000 publishes 2,000 generated materials from nothing.
 // Target: 2.5 s on two cores.
 func BenchmarkPublish2000(b *testing.B) { benchmarkPublish(b, generated(b, 2000)) }
+
+// BenchmarkChanges2000 compares two references of 2,000 materials in which
+// every α differs, from folders and from editions. Target: under 3 s.
+func BenchmarkChanges2000(b *testing.B) {
+	old, now := generated(b, 2000), generated(b, 2000)
+	files, err := filepath.Glob(filepath.Join(now, "materials", "alloy-*.yaml"))
+	if err != nil {
+		b.Fatal(err)
+	}
+	for _, file := range files {
+		text, err := os.ReadFile(file)
+		if err != nil {
+			b.Fatal(err)
+		}
+		if err := os.WriteFile(file, bytes.Replace(text, []byte(" ppm/K ± 10 ppm/K"), []byte("1 ppm/K ± 10 ppm/K"), 1), 0o644); err != nil {
+			b.Fatal(err)
+		}
+	}
+	for _, folder := range []string{old, now} {
+		var out, errs bytes.Buffer
+		if code := Run([]string{"publish", "--folder", folder, "--into", filepath.Join(folder, "public"), "--edition", "2026-06"}, &out, &errs); code != 0 {
+			b.Fatal(errs.String())
+		}
+	}
+	edition := filepath.Join("materials", "editions", "2026-06.json")
+	for _, c := range []struct{ name, old, now string }{
+		{"folders", old, now}, {"sites", filepath.Join(old, "public"), filepath.Join(now, "public")}, {"editions", filepath.Join(old, edition), filepath.Join(now, edition)},
+	} {
+		b.Run(c.name, func(b *testing.B) {
+			for b.Loop() {
+				var out, errs bytes.Buffer
+				if code := Run([]string{"changes", c.old, c.now}, &out, &errs); code != 0 || !bytes.Contains(out.Bytes(), []byte("2000 changed")) {
+					b.Fatal(errs.String())
+				}
+			}
+		})
+	}
+}

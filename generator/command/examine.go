@@ -33,7 +33,7 @@ Exit 1 when there is an error.`,
 }
 
 func (s *session) runExamine(ids []string, format, today string) error {
-	lib, err := s.load()
+	lib, err := s.loadWhole()
 	if err != nil {
 		return err
 	}

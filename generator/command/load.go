@@ -6,6 +6,7 @@ import (
 	"io"
 	"runtime"
 
+	"ohmfolio/generator/changes"
 	"ohmfolio/generator/examine"
 	"ohmfolio/generator/library"
 	"ohmfolio/generator/material"
@@ -14,8 +15,15 @@ import (
 )
 
 // load reads the reference in --folder.
-func (s *session) load() (*library.Library, error) {
-	lib, err := library.Load(s.folder, library.Options{})
+func (s *session) load() (*library.Library, error) { return s.loadWith(library.Options{}) }
+
+// loadWhole reads its editions, too.
+func (s *session) loadWhole() (*library.Library, error) {
+	return s.loadWith(library.Options{Editions: true})
+}
+
+func (s *session) loadWith(o library.Options) (*library.Library, error) {
+	lib, err := library.Load(s.folder, o)
 	var missing library.MissingError
 	if errors.As(err, &missing) {
 		return nil, requestError{err}
@@ -40,6 +48,7 @@ func judged(lib *library.Library) (outcomes []examine.Judged, findings []place.F
 // examineAll holds the library against every rule.
 func examineAll(lib *library.Library, today string) ([]examine.Judged, []place.Finding) {
 	outcomes, more := judged(lib)
+	more = append(more, changes.Examine(lib)...)
 	return outcomes, examine.Run(lib, outcomes, examine.Options{Today: today, Parallel: runtime.GOMAXPROCS(0), More: more})
 }
 

@@ -14,6 +14,7 @@ import (
 
 	"github.com/spf13/cobra"
 
+	"ohmfolio/generator/changes"
 	"ohmfolio/generator/examine"
 	"ohmfolio/generator/export"
 	"ohmfolio/generator/library"
@@ -22,32 +23,33 @@ import (
 	"ohmfolio/generator/place"
 	"ohmfolio/generator/site"
 	"ohmfolio/generator/statement"
-	"ohmfolio/generator/study"
 	"ohmfolio/themes"
 )
 
 func (s *session) publish() *cobra.Command {
-	var into, report, without string
+	var f publishFlags
 	c := &cobra.Command{
 		Use: "publish", Short: "Examine the reference, then write the whole site",
 		Long: `Examines everything, then writes the site. Nothing is written while a record
 or a page is in error. A binding study that does not hold is written with its
-verdict, and the exit code is 1.`,
-		Example: "  ohmfolio publish --into public",
+verdict, and the exit code is 1. With --edition, what the reference states is
+also frozen under that name in materials/editions, which the keeper commits.`,
+		Example: "  ohmfolio publish --into public --edition 2026-06",
 		Args:    cobra.NoArgs,
 		RunE: func(_ *cobra.Command, _ []string) error {
-			if into == "" {
-				into = filepath.Join(s.folder, "public")
+			if f.into == "" {
+				f.into = filepath.Join(s.folder, "public")
 			}
-			if without != "" && without != "offers" {
-				return fmt.Errorf("--without %q: only offers can be left out", without)
+			if f.without != "" && f.without != "offers" {
+				return fmt.Errorf("--without %q: only offers can be left out", f.without)
 			}
-			return s.runPublish(into, report, without == "offers")
+			return s.runPublish(f)
 		},
 	}
-	c.Flags().StringVar(&into, "into", "", "folder for the site; public/ under --folder when not given")
-	c.Flags().StringVar(&without, "without", "", "leave out: offers, so that the site may go to customers")
-	c.Flags().StringVar(&report, "report", "", "file for a report in JSON")
+	c.Flags().StringVar(&f.into, "into", "", "folder for the site; public/ under --folder when not given")
+	c.Flags().StringVar(&f.without, "without", "", "leave out: offers, so that the site may go to customers")
+	c.Flags().StringVar(&f.report, "report", "", "file for a report in JSON")
+	c.Flags().StringVar(&f.edition, "edition", "", "name of an edition to freeze, such as 2026-06")
 	return c
 }
 
@@ -75,40 +77,55 @@ type failingJSON struct {
 	Changed []string `json:"changed"`
 }
 
-func (s *session) runPublish(into, reportFile string, noOffers bool) error {
-	relaxCollector()
+// publishFlags are the words of one publish command.
+type publishFlags struct{ into, report, without, edition string }
+
+func (s *session) runPublish(f publishFlags) error {
+	relaxCollector(0)
 	start := time.Now()
-	lib, err := s.load()
+	lib, err := s.loadWhole()
 	if err != nil {
 		return err
 	}
-	if noOffers {
+	relaxCollector(lib.EditionBytes())
+	if f.without == "offers" {
 		lib.LeaveOutOffers()
 	}
+	if err := s.mayFreeze(f.edition); err != nil {
+		return err
+	}
 	outcomes, findings := examineAll(lib, "")
-	rep := reportJSON{Findings: examine.JSON(findings).Findings, Failing: failing(outcomes, before(into))}
+	rep := reportJSON{Findings: examine.JSON(findings).Findings, Failing: failing(outcomes, before(f.into))}
 	s.printFindings(findings)
 	if n := place.Count(findings, place.Error); n > 0 {
 		fmt.Fprintf(s.err, "nothing is written: %s\n", plural(n, "error"))
-		return joinError(errShown, writeReport(reportFile, rep, start))
+		return joinError(errShown, writeReport(f.report, rep, start))
 	}
-	result, pages, err := s.write(lib, outcomes, findings, into)
+	frozen, err := addEdition(lib, outcomes, f.edition)
+	if err != nil {
+		return err
+	}
+	result, pages, err := s.write(lib, outcomes, findings, f.into)
+	if err == nil && f.edition != "" {
+		err = s.keepEdition(f.edition, frozen)
+	}
 	rep.Written, rep.Removed, rep.Files, rep.Bytes, rep.Pages = result.Written, result.Removed, result.Files, result.Bytes, pages
-	if err := joinError(err, writeReport(reportFile, rep, start)); err != nil {
+	if err := joinError(err, writeReport(f.report, rep, start)); err != nil {
 		return err
 	}
 	if len(rep.Failing) > 0 {
 		return wrong("the site is written; %s not hold: %s", plural(len(rep.Failing), "binding verdict")+" does", failingText(rep.Failing))
 	}
 	fmt.Fprintf(s.out, "%s, %s, %d written, %.1f s: %s\n", plural(len(lib.Materials), "material"), plural(result.Files, "file"),
-		result.Written, time.Since(start).Seconds(), filepath.ToSlash(filepath.Join(into, "index.html")))
+		result.Written, time.Since(start).Seconds(), filepath.ToSlash(filepath.Join(f.into, "index.html")))
 	return nil
 }
 
 // relaxCollector trades memory for time: many small pages make much garbage.
-func relaxCollector() {
+// What is held for good comes on top of the limit.
+func relaxCollector(held int64) {
 	debug.SetGCPercent(400)
-	debug.SetMemoryLimit(128 << 20)
+	debug.SetMemoryLimit(128<<20 + 2*held)
 }
 
 func joinError(first, second error) error {
@@ -181,11 +198,9 @@ func (s *session) write(lib *library.Library, outcomes []examine.Judged, finding
 
 // Outputs joins the pages and the data files of a reference.
 func Outputs(lib *library.Library, outcomes []examine.Judged, findings []place.Finding, theme fs.FS) ([]output.Output, error) {
-	in := &site.Input{Library: lib, Outcomes: map[string][]*study.Outcome{}, Findings: findings, Theme: theme}
-	for _, j := range outcomes {
-		key := strings.TrimPrefix(j.Document.Room+"/"+j.Document.Stem, "/")
-		in.Outcomes[key] = append(in.Outcomes[key], j.Outcome)
-	}
+	in := &site.Input{Library: lib, Outcomes: byDocument(outcomes), Findings: findings, Theme: theme}
+	now := changes.Freeze(lib, in.Outcomes, "")
+	addHistory(in, lib, now)
 	in.Statement = func(r *material.Record) *statement.Statement { return statement.Of(lib, r) }
 	in.Answer = func(question, written, id string) (string, string, bool) {
 		r := lib.Material(id)
@@ -203,7 +218,8 @@ func Outputs(lib *library.Library, outcomes []examine.Judged, findings []place.F
 	for _, j := range outcomes {
 		decisions = append(decisions, export.DecisionsOf(j.Document.Source.File, j.Outcome)...)
 	}
-	return append(append(pages, export.Outputs(lib)...), export.Decisions(decisions)), nil
+	list := append(append(pages, export.Outputs(lib)...), export.Decisions(decisions))
+	return append(list, statementFiles(lib, now)...), nil
 }
 
 // themeOf is the built-in theme, which the folder's own themes/ overrides

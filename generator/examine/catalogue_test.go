@@ -8,6 +8,7 @@ import (
 
 	"golang.org/x/tools/txtar"
 
+	"ohmfolio/generator/changes"
 	"ohmfolio/generator/form"
 	"ohmfolio/generator/library"
 	"ohmfolio/generator/place"
@@ -29,7 +30,7 @@ func examined(archive, today string) []place.Finding {
 	}
 	lib := library.FromFiles(files)
 	var outcomes []Judged
-	var more []place.Finding
+	more := changes.Examine(lib)
 	for _, d := range lib.Documents {
 		for _, block := range d.Page.Studies {
 			o, found := study.Run(lib, block)

@@ -22,6 +22,11 @@ func cited(r *material.Record, f func(c material.Citation, n *form.Node, what st
 			f(*s.Source, s.Source.Node, "stock "+s.Form)
 		}
 	}
+	for _, e := range r.Equivalents {
+		if e.Source != nil {
+			f(*e.Source, e.Source.Node, "the equivalent "+e.Designation)
+		}
+	}
 }
 
 var sourceUnknown = Rule{

@@ -184,7 +184,7 @@ func orDraft(s material.Status) string {
 var offerUnusable = Rule{
 	Kind: place.Kind{
 		Code: "offer-unusable", Severity: place.Warning, Title: "An offer cannot be ranked",
-		Explanation: "An undated offer, one without a currency, or one whose date is past (with --today) is listed and not ranked: metal-linked prices may hold for a day.",
+		Explanation: "An undated offer, or one without a currency, is listed and not ranked: metal-linked prices may hold for a day.",
 		Trigger:     copper("") + "-- materials/offers.csv --\nmaterial,supplier,form,size,price,currency,per,quantity,date,valid_until,metal_base,certificate,resistivity_tolerance,note\nx,A supplier,wire,1 mm,12.50,EUR,kg,10 kg,,,,,,invented\n",
 		Mend:        "write date and currency as the offer states them, or ask again",
 	},
@@ -198,8 +198,6 @@ var offerUnusable = Rule{
 				what = "has no date"
 			case o.Currency == "":
 				what = "has no currency"
-			case p.Today != "" && o.ValidUntil != "" && o.ValidUntil < p.Today:
-				what = "expired on " + o.ValidUntil
 			}
 			if what != "" {
 				p.Find(nil, o.Position, "the offer of "+quote(o.Supplier)+" "+what, p.rule.Kind.Mend)

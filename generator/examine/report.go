@@ -3,6 +3,7 @@ package examine
 import (
 	"sort"
 
+	"ohmfolio/generator/changes"
 	"ohmfolio/generator/columns"
 	"ohmfolio/generator/form"
 	"ohmfolio/generator/library"
@@ -16,7 +17,7 @@ import (
 // Catalogue joins the kinds of finding of every package, sorted by code.
 func Catalogue() []place.Kind {
 	var list []place.Kind
-	for _, kinds := range [][]place.Kind{quantity.FindingKinds, form.Kinds, words.Kinds, columns.Kinds, material.Kinds, library.Kinds, study.FindingKinds} {
+	for _, kinds := range [][]place.Kind{quantity.FindingKinds, form.Kinds, words.Kinds, columns.Kinds, material.Kinds, library.Kinds, study.FindingKinds, changes.Kinds} {
 		list = append(list, kinds...)
 	}
 	for _, r := range rules {

@@ -1,7 +1,8 @@
 // Package export writes the data files of a reference: JSON and CSV of every
-// material, the whole as one JSON file, and one W3C CSVW description of the
-// CSV files; besides a simulator line, a look-up table for firmware and a table
-// for finite elements. Every file carries identity: material, data set, condition,
+// material, one W3C CSVW description of the CSV files, a simulator line, a
+// look-up table for firmware and a table for finite elements. The whole as one
+// JSON file is a statement, which package changes writes. Every file carries
+// identity: material, data set, condition,
 // revision, fingerprint, reference temperature, valid range.
 package export
 
@@ -25,7 +26,6 @@ func Outputs(lib *library.Library) []output.Output {
 		list = append(list, forPrograms(lib, r)...)
 	}
 	return append(list,
-		output.Output{Path: "data/reference.json", Write: func(w *bytes.Buffer) error { return writeReference(w, lib) }},
 		output.Output{Path: "data/csv-metadata.json", Write: func(w *bytes.Buffer) error { return writeJSON(w, describeCSV(lib)) }})
 }
 
@@ -80,34 +80,4 @@ func writeJSON(w *bytes.Buffer, v any) error {
 	e.SetEscapeHTML(false)
 	e.SetIndent("", " ")
 	return e.Encode(v)
-}
-
-type referenceHead struct {
-	Title        string `json:"title"`
-	Organisation string `json:"organisation"`
-}
-
-// writeReference writes material by material, so that the whole is never held
-// in memory twice.
-func writeReference(w *bytes.Buffer, lib *library.Library) error {
-	head, err := json.Marshal(referenceHead{lib.Settings.Title, lib.Settings.Organisation})
-	if err != nil {
-		return err
-	}
-	w.Write(head[:len(head)-1])
-	w.WriteString(",\"materials\":[")
-	e := json.NewEncoder(w)
-	e.SetEscapeHTML(false)
-	for i, r := range lib.Materials {
-		if i > 0 {
-			w.WriteByte(',')
-		}
-		w.WriteByte('\n')
-		if err := e.Encode(Material(lib, r)); err != nil {
-			return err
-		}
-		w.Truncate(w.Len() - 1) // the encoder's own line end
-	}
-	w.WriteString("\n]}\n")
-	return nil
 }

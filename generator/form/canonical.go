@@ -4,13 +4,12 @@ import (
 	"bytes"
 	"sort"
 	"strconv"
-	"strings"
 
 	"ohmfolio/generator/quantity"
 )
 
 // Canonical writes what n means, whatever way it is spelled: keys sorted,
-// quantities in SI to 12 digits, white space in texts folded. Keys for which
+// units and quantities in SI to 12 digits, white space in texts folded. Keys for which
 // skip answers true are left out.
 func (n *Node) Canonical(w *bytes.Buffer, skip func(key string) bool) {
 	switch {
@@ -32,10 +31,8 @@ func (n *Node) Canonical(w *bytes.Buffer, skip func(key string) bool) {
 		canonicalNumber(w, n.typed.high.Value)
 	case n.has == isNumber, n.has == isInteger:
 		canonicalNumber(w, n.number)
-	case n.has == isYesNo:
-		w.WriteString(strconv.FormatBool(n.yes))
 	default:
-		w.WriteString(strconv.Quote(strings.Join(strings.Fields(n.text), " ")))
+		w.WriteString(strconv.Quote(n.plainText()))
 	}
 }
 
@@ -44,23 +41,41 @@ func (n *Node) canonicalMapping(w *bytes.Buffer, skip func(key string) bool) {
 	sort.Strings(keys)
 	w.WriteByte('{')
 	for _, k := range keys {
-		if skip(k) {
+		if n.has == isMapping && skip(k) { // free names mean nothing of themselves
 			continue
 		}
 		w.WriteString(strconv.Quote(k))
 		w.WriteByte(':')
-		n.Get(k).short().Canonical(w, skip)
+		n.Get(k).short(skip).Canonical(w, skip)
 		w.WriteByte(',')
 	}
 	w.WriteByte('}')
 }
 
-// short turns {id: x} into x, which means the same.
-func (n *Node) short() *Node {
-	if n.has == isMapping && len(n.keys) == 1 && n.keys[0] == "id" {
-		return n.items[0]
+// shortKeys are the keys that a short form stands for: a citation by its ID
+// alone, a checked state by its word alone.
+var shortKeys = map[string]bool{"id": true, "against": true}
+
+// short turns {id: x} into x, which means the same; keys that are skipped do
+// not count.
+func (n *Node) short(skip func(key string) bool) *Node {
+	if n.has != isMapping {
+		return n
 	}
-	return n
+	var only *Node
+	for i, k := range n.keys {
+		switch {
+		case skip(k):
+		case shortKeys[k]:
+			only = n.items[i]
+		default:
+			return n
+		}
+	}
+	if only == nil {
+		return n
+	}
+	return only
 }
 
 func canonicalQuantity(w *bytes.Buffer, q quantity.Quantity) {

@@ -103,6 +103,10 @@ func (r *reader) scalar(y *yaml.Node, t Type) *Node {
 		}
 	case isOneOf:
 		r.oneOf(y, n, t)
+	case isUnit:
+		if u, ok := quantity.FindUnit(t.kinds[0], y.Value); ok {
+			n.typed = &typed{quantity: quantity.Quantity{Unit: u}}
+		}
 	case isQuantity:
 		q, p := quantity.ParseOneOf(y.Value, t.kinds...)
 		n.typed, n.converted = &typed{quantity: q}, r.problem(y, p)

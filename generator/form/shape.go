@@ -44,6 +44,7 @@ const (
 	isQuantity
 	isRange
 	isOneOf
+	isUnit
 	isList
 	isMapping
 	isNamed
@@ -66,6 +67,10 @@ func Quantity(kinds ...quantity.Kind) Type { return Type{what: isQuantity, kinds
 
 // Range is two values of a kind joined by the word to.
 func Range(kind quantity.Kind) Type { return Type{what: isRange, kinds: []quantity.Kind{kind}} }
+
+// UnitOf is the spelling of a unit of a kind, which stands for the numbers of a
+// table. Who reads the table tells about units that are not known.
+func UnitOf(kind quantity.Kind) Type { return Type{what: isUnit, kinds: []quantity.Kind{kind}} }
 
 // OneOf is one of the words.
 func OneOf(words ...string) Type { return Type{what: isOneOf, words: words} }

@@ -18,6 +18,7 @@ type Library struct {
 	SourceIDs []string           // sorted
 	Documents []*Document        // home, guides, reports in reading order
 	Offers    []Offer
+	Editions  []EditionFile   // materials/editions, by name; only when they were asked for
 	Findings  []place.Finding // what reading found, sorted
 
 	byID map[string]*material.Record
@@ -40,9 +41,17 @@ type Source struct {
 	CheckedDate                                                      string
 	CheckedBy                                                        string
 	SupersededBy                                                     string
+	Access                                                           string // where the company's copy is
 	Note                                                             string
 	Invented                                                         bool
 	Position                                                         place.Position
+}
+
+// An EditionFile is the text of one frozen statement.
+type EditionFile struct {
+	Name string // the file's stem
+	File string // below the reference's folder
+	Text []byte
 }
 
 // A Document is one Markdown page of content/.

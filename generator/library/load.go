@@ -20,7 +20,8 @@ import (
 
 // Options of loading.
 type Options struct {
-	Parallel int // readers at once; 0 takes as many as there are processors
+	Parallel int  // readers at once; 0 takes as many as there are processors
+	Editions bool // read the texts of materials/editions, too
 }
 
 // Load reads the reference in folder. What is wrong in its files are findings
@@ -50,7 +51,7 @@ func FromFiles(files map[string][]byte) *Library {
 	for name, text := range files {
 		m[name] = &fstest.MapFile{Data: text}
 	}
-	return load(m, ".", Options{Parallel: 1})
+	return load(m, ".", Options{Parallel: 1, Editions: true})
 }
 
 // loader gathers one library.
@@ -67,6 +68,9 @@ func load(fsys fs.FS, folder string, o Options) *Library {
 	l.records(o)
 	l.documents()
 	l.offers()
+	if o.Editions {
+		l.editions()
+	}
 	place.Sort(l.findings)
 	l.lib.Findings = l.findings
 	return l.lib

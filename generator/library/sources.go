@@ -20,6 +20,7 @@ var sourceShape = &form.Shape{Name: "a source", Doc: "One source that records ci
 	{Key: "year", Is: form.Text, Doc: "Year.", Example: "1925"},
 	{Key: "where", Is: form.Text, Doc: "Pages, clause or identifier.", Example: "1147-1298"},
 	{Key: "checked", Is: material.CheckedType(), Doc: "Against what its values were compared.", Example: "transcription"},
+	{Key: "access", Is: form.Text, Doc: "Where the company's copy is, and who may read it.", Example: "metrology desk, shelf 3"},
 	{Key: "superseded_by", Is: form.Text, Doc: "ID of the newer edition.", Example: "iec-60751"},
 	{Key: "invented", Is: form.YesNo, Doc: "A source of the demo.", Example: "yes"},
 	{Key: "note", Is: form.Text, Doc: "A remark that is printed.", Example: "the standard itself was not opened"},
@@ -50,7 +51,7 @@ func (l *loader) sources() {
 func readSource(id string, n *form.Node) *Source {
 	s := &Source{ID: id, Kind: n.Get("kind").Text(), Author: n.Get("author").Text(), Title: n.Get("title").Text(), Number: n.Get("number").Text(),
 		Publisher: n.Get("publisher").Text(), Edition: n.Get("edition").Text(), Year: n.Get("year").Text(), Where: n.Get("where").Text(),
-		SupersededBy: n.Get("superseded_by").Text(), Note: n.Get("note").Text(), Invented: n.Get("invented").Yes(), Position: n.KeyPosition()}
+		SupersededBy: n.Get("superseded_by").Text(), Access: n.Get("access").Text(), Note: n.Get("note").Text(), Invented: n.Get("invented").Yes(), Position: n.KeyPosition()}
 	s.Checked, s.CheckedDate, s.CheckedBy = material.ReadChecked(n.Get("checked"))
 	return s
 }

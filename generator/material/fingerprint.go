@@ -13,7 +13,7 @@ import (
 // they are outside the fingerprint, and so are lots, stock prices and dates.
 var administrative = map[string]bool{
 	"status": true, "revision": true, "sign_off": true, "lots": true, "formerly": true, "replaced_by": true, "withdrawn_reason": true,
-	"date": true, "by": true,
+	"date": true, "by": true, "expires": true,
 }
 
 // fingerprint is a short hash over what a sheet states of the material: the

@@ -65,9 +65,12 @@ func (rd *reader) identity() {
 	}
 	r.Revision, _ = n.Get("revision").Int()
 	r.ReplacedBy, r.WithdrawnReason, r.Lots = n.Get("replaced_by").Text(), n.Get("withdrawn_reason").Text(), n.Get("lots").Text()
-	if s := n.Get("sign_off"); s != nil {
-		r.SignOff = &SignOff{Author: s.Get("author").Text(), Reviewer: s.Get("reviewer").Text(), Date: s.Get("date").Text(),
-			Reason: s.Get("reason").Text(), Due: s.Get("due").Text(), Node: s}
+	r.SignOff = readSignOff(n.Get("sign_off"))
+	for _, e := range n.Get("equivalents").List() {
+		r.Equivalents = append(r.Equivalents, readEquivalent(e))
+	}
+	for _, d := range n.Get("declarations").List() {
+		r.Declarations = append(r.Declarations, readDeclaration(d))
 	}
 }
 

@@ -41,8 +41,12 @@ type Record struct {
 	TCRLimits  []TCRLimit
 	Properties []Property // in file order
 	Stock      []Stock
-	Lots       string // CSV beside the record
-	Received   []Lot  // of that file, in order of dates
+
+	Equivalents  []Equivalent
+	Declarations []Declaration
+
+	Lots     string // CSV beside the record
+	Received []Lot  // of that file, in order of dates
 
 	Fingerprint string // over the meaning that a sheet states
 }

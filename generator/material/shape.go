@@ -27,10 +27,10 @@ var citationType = form.Either(form.Text, form.Mapping(&form.Shape{
 	}}))
 
 var tableShape = &form.Shape{Name: "table", Doc: "A printed table. Rows are [temperature, value] in rising temperature.", Fields: []form.Field{
-	{Key: "temperature", Required: true, Is: form.Text, Doc: "Unit of the temperatures.", Example: "K"},
-	{Key: "resistivity", Is: form.Text, Doc: "Unit of the values when they are resistivities.", Example: "µΩ·cm"},
-	{Key: "conductivity", Is: form.Text, Doc: "Unit of the values when they are conductivities; %IACS needs quotes.", Example: "MS/m"},
-	{Key: "resistance_ratio", Is: form.Text, Doc: "1 when the values are R/R at the reference temperature.", Example: "1"},
+	{Key: "temperature", Required: true, Is: form.UnitOf(quantity.Temperature), Doc: "Unit of the temperatures.", Example: "K"},
+	{Key: "resistivity", Is: form.UnitOf(quantity.Resistivity), Doc: "Unit of the values when they are resistivities.", Example: "µΩ·cm"},
+	{Key: "conductivity", Is: form.UnitOf(quantity.Conductivity), Doc: "Unit of the values when they are conductivities; %IACS needs quotes.", Example: "MS/m"},
+	{Key: "resistance_ratio", Is: form.UnitOf(quantity.Ratio), Doc: "1 when the values are R/R at the reference temperature.", Example: "1"},
 	{Key: "rows", Required: true, Is: form.Rows, Doc: "The rows as printed.", Example: "[[100, 0.348], [200, 1.046]]"},
 	{Key: "each_row", Is: form.Text, Doc: "± of each row of a table of resistivity or conductivity, as limits or with (k=2) as an uncertainty.", Example: "± 0.5 % (k=2)"},
 	{Key: "interpolate", Is: form.OneOf("linear", "monotone"), Doc: "Between rows: linear (usual for ratios), or a monotone cubic (usual for resistivities).", Example: "linear"},
@@ -108,3 +108,13 @@ var specimenShape = &form.Shape{Name: "specimen", Doc: "Geometry of a specimen."
 	{Key: "thermometer", Is: form.Quantity(quantity.TemperatureDifference), Doc: "Uncertainty common to all temperatures.", Example: "0 K ± 0.04 K (k=2)"},
 	{Key: "bridge", Is: form.Quantity(quantity.Ratio), Doc: "Relative uncertainty common to all resistances.", Example: "0 % ± 0.01 % (k=2)"},
 }}
+
+// DataSetKeys are the keys of a data set, which stand at the top of a record
+// that has only one.
+func DataSetKeys() []string {
+	list := make([]string, len(dataSetFields))
+	for i, f := range dataSetFields {
+		list[i] = f.Key
+	}
+	return list
+}

@@ -98,5 +98,7 @@ var recordShape = &form.Shape{Name: "a material record", Doc: "One material. Its
 	{Key: "tcr_limits", Is: form.List(form.Mapping(limitShape)), Doc: "Class figures."},
 	{Key: "properties", Is: form.Mapping(propertiesShape()), Doc: "Other properties."},
 	{Key: "stock", Is: form.List(form.Mapping(stockShape)), Doc: "Stock sizes."},
+	{Key: "equivalents", Is: form.List(form.Mapping(equivalentShape)), Doc: "What other designations are worth as replacements."},
+	{Key: "declarations", Is: form.List(form.Mapping(declarationShape)), Doc: "Statements on restricted substances."},
 	{Key: "lots", Is: form.Text, Doc: "CSV of received lots beside the record.", Example: "cumn12ni-lots.csv"},
 }, dataSetFields...)}

@@ -213,5 +213,11 @@ func findWords(r *material.Record) string {
 	for _, c := range r.Composition {
 		parts = append(parts, c.Key)
 	}
+	for _, e := range r.Equivalents {
+		parts = append(parts, e.Designation)
+	}
+	for _, d := range r.Declarations {
+		parts = append(parts, d.Substance, d.Number)
+	}
 	return strings.ToLower(strings.Join(parts, " "))
 }

@@ -40,28 +40,6 @@ func (s *site) home() output.Output {
 	})
 }
 
-// sourceRow is one source with the materials that cite it.
-type sourceRow struct {
-	ID, Text, Kind, Checked, Superseded, Note string
-	Invented                                  bool
-	Used                                      []link
-}
-
-func (s *site) sources() output.Output {
-	return s.page("sources.html", "sources-page", func() any {
-		used := s.citedBy()
-		var rows []sourceRow
-		for _, id := range s.in.Library.SourceIDs {
-			src := s.in.Library.Source(id)
-			rows = append(rows, sourceRow{id, statement.SourceText(src), src.Kind, checkedText(src), src.SupersededBy, src.Note, src.Invented, used[id]})
-		}
-		return struct {
-			frame
-			Rows []sourceRow
-		}{s.frame("Sources", "sources", "", "sources.html"), rows}
-	})
-}
-
 func checkedText(src *library.Source) string {
 	t := or(string(src.Checked), "not stated")
 	if src.CheckedDate != "" {
@@ -160,6 +138,7 @@ type reviewPage struct {
 	Due       []dueRow
 	Open      []openRow
 	Unchecked []openRow
+	Expiring  []expiringRow
 	Findings  []findingRow
 }
 
@@ -167,6 +146,9 @@ type dueRow struct {
 	ID, Name, Date, Due string
 	Revision            int
 }
+
+// expiringRow is a declaration or an offer with its last day.
+type expiringRow struct{ Day, ID, Name, What string }
 
 type openRow struct{ ID, Name, Status, What string }
 
@@ -178,6 +160,8 @@ func (s *site) review() output.Output {
 		for _, r := range s.in.Library.Materials {
 			s.reviewOf(&p, r)
 		}
+		s.offersOf(&p)
+		sort.SliceStable(p.Expiring, func(i, j int) bool { return p.Expiring[i].Day < p.Expiring[j].Day })
 		sort.SliceStable(p.Due, func(i, j int) bool { return p.Due[i].Due < p.Due[j].Due })
 		for _, f := range s.in.Findings {
 			if f.Severity != place.Note {
@@ -192,6 +176,11 @@ func (s *site) reviewOf(p *reviewPage, r *material.Record) {
 	if r.SignOff != nil && r.SignOff.Due != "" && r.Status != material.Withdrawn {
 		p.Due = append(p.Due, dueRow{r.ID, r.Name, r.SignOff.Date, r.SignOff.Due, r.Revision})
 	}
+	for _, d := range r.Declarations {
+		if d.Expires != "" && r.Status != material.Withdrawn {
+			p.Expiring = append(p.Expiring, expiringRow{d.Expires, r.ID, r.ShortName(), "declaration on " + d.Substance + ", " + d.Document})
+		}
+	}
 	if r.Status != material.Released {
 		p.Open = append(p.Open, openRow{ID: r.ID, Name: r.Name, Status: statusText(r)})
 	}
@@ -203,5 +192,14 @@ func (s *site) reviewOf(p *reviewPage, r *material.Record) {
 	}
 	if len(what) > 0 {
 		p.Unchecked = append(p.Unchecked, openRow{ID: r.ID, Name: r.Name, What: strings.Join(what, ", ")})
+	}
+}
+
+func (s *site) offersOf(p *reviewPage) {
+	for _, o := range s.in.Library.Offers {
+		r := s.in.Library.Material(o.Material)
+		if o.ValidUntil != "" && r != nil {
+			p.Expiring = append(p.Expiring, expiringRow{o.ValidUntil, r.ID, r.ShortName(), "offer of " + o.Supplier + ", " + o.Form + " " + o.Size})
+		}
 	}
 }

@@ -25,7 +25,7 @@ type look struct {
 }
 
 var templateNames = []string{"frame", "home-page", "materials-page", "material-page", "sheet-page", "report-page", "guide-page",
-	"sources-page", "words-page", "decisions-page", "review-page", "side-by-side-page", "study-part", "study-page"}
+	"sources-page", "words-page", "decisions-page", "review-page", "side-by-side-page", "editions-page", "changes-page", "study-part", "study-page"}
 
 func loadLook(theme fs.FS, list []byte) (*look, error) {
 	l := &look{scripts: map[string]string{}, templates: template.New("").Funcs(helpers)}
@@ -89,7 +89,14 @@ var helpers = template.FuncMap{
 	"properties": propertiesHTML,
 	"sets":       setsHTML,
 	"figure":     figureHTML,
+	"labelled":   func(label string, rows any) labelled { return labelled{label, rows} },
 	"join":       func(list []string) string { return strings.Join(list, ", ") },
+}
+
+// labelled hands rows with their caption to a part of a template.
+type labelled struct {
+	Label string
+	Rows  any
 }
 
 func figureHTML(f *figure.Figure) (template.HTML, error) {

@@ -18,6 +18,7 @@ type materialPage struct {
 	Contents    []contentsItem
 	BandWords   string
 	Cautions    cautionList
+	History     []historyRow
 }
 
 // pair is the statement that a page and its sheet share: computed by the one
@@ -47,8 +48,9 @@ func (s *site) materialPair(r *material.Record) (page, sheet output.Output) {
 	compute := func() *statement.Statement { return s.in.Statement(r) }
 	page = s.page("material/"+r.ID+".html", "material-page", func() any {
 		p := s.materialPage(shared.take(compute))
-		p.frame = s.frame(r.Name, "material", "../", "materials.html")
+		p.frame = s.frame(r.Name, "material", "../", "materials.html", "review.js")
 		p.Contents = materialContents(p.S)
+		p.History = s.history(r.ID)
 		return p
 	})
 	sheet = s.page("sheet/"+r.ID+".html", "sheet-page", func() any {
@@ -100,7 +102,10 @@ func materialContents(st *statement.Statement) []contentsItem {
 	add(len(st.Properties) > 0, "properties", "Properties")
 	add(true, "sets", "Data sets")
 	add(len(st.PerMetre.Rows) > 0, "metre", "Per metre")
+	add(len(st.Equivalents) > 0, "equivalents", "Equivalents")
+	add(len(st.Declarations) > 0, "declarations", "Declarations")
 	add(true, "missing", "Not stated")
+	add(true, "history", "History")
 	add(true, "used", "Where used")
 	add(true, "sources", "Sources")
 	return list

@@ -7,6 +7,7 @@ import (
 	"fmt"
 	"io/fs"
 
+	"ohmfolio/generator/changes"
 	"ohmfolio/generator/library"
 	"ohmfolio/generator/material"
 	"ohmfolio/generator/output"
@@ -25,6 +26,11 @@ type Input struct {
 	// Answer gives the current value of a live number: text, note, and
 	// whether there is one.
 	Answer func(question, written, materialID string) (text, note string, ok bool)
+	// Editions, Changes and History tell what former statements said; nil
+	// where nobody asks.
+	Editions func() []changes.Row
+	Changes  func() *changes.Report // from the newest edition to now, nil when there is none
+	History  func(materialID string) []changes.Entry
 }
 
 // Outputs lists every page, style and script. The error names the template
@@ -37,7 +43,7 @@ func Outputs(in *Input) ([]output.Output, error) {
 	}
 	s.used = usedBy(in)
 	list := s.look.outputs()
-	list = append(list, s.home(), s.materials(), s.sideBySide(), s.sources(), s.words(), s.decisions(), s.review())
+	list = append(list, s.home(), s.materials(), s.sideBySide(), s.sources(), s.words(), s.decisions(), s.review(), s.editions(), s.changes())
 	for _, r := range in.Library.Materials {
 		page, sheet := s.materialPair(r)
 		list = append(list, page, sheet)

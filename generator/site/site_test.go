@@ -8,6 +8,7 @@ import (
 	"strings"
 	"testing"
 
+	"ohmfolio/generator/changes"
 	"ohmfolio/generator/library"
 	"ohmfolio/generator/material"
 	"ohmfolio/generator/output"
@@ -29,6 +30,19 @@ func inputOf(lib *library.Library) *Input {
 			}
 		}
 	}
+	editions, findings := changes.Editions(lib)
+	in.Findings = append(in.Findings, findings...)
+	now := changes.Freeze(lib, in.Outcomes, "")
+	in.Editions = func() []changes.Row { return changes.Rows(editions) }
+	in.History = func(id string) []changes.Entry {
+		return changes.History(append(append([]*changes.Statement{}, editions...), now), id)
+	}
+	in.Changes = func() *changes.Report {
+		if len(editions) == 0 {
+			return nil
+		}
+		return changes.Compare(editions[len(editions)-1], now, editions[len(editions)-1].Edition, "now")
+	}
 	in.Answer = func(question, written, id string) (string, string, bool) {
 		a, err := statement.AskInWords(lib, lib.Material(id), question, written)
 		return a.Text, a.Note, err == nil
@@ -38,7 +52,7 @@ func inputOf(lib *library.Library) *Input {
 
 func demo(t testing.TB) *library.Library {
 	t.Helper()
-	lib, err := library.Load("../..", library.Options{})
+	lib, err := library.Load("../..", library.Options{Editions: true})
 	if err != nil {
 		t.Fatal(err)
 	}
@@ -145,6 +159,8 @@ valid_range: 0 °C to 60 °C
 properties:
   density: {value: 8.4 g/cm³, condition: %[1]s, note: %[1]s, source: s}
 stock: [{form: wire, diameter: 1 mm, note: %[1]s}]
+equivalents: [{designation: %[1]s, system: %[1]s, record: x, verdict: near, use: %[1]s, reason: %[1]s, sign_off: {author: %[1]s, reviewer: %[1]s}}]
+declarations: [{substance: %[1]s, number: %[1]s, basis: per article, exemption: %[1]s, document: %[1]s, date: 2026-01-01, note: %[1]s}]
 `, quoted)
 	lib := library.FromFiles(map[string][]byte{
 		"materials/sources.yaml":    []byte("s: {kind: standard, title: " + quoted + ", number: " + quoted + ", note: " + quoted + "}\n"),
@@ -157,6 +173,16 @@ stock: [{form: wire, diameter: 1 mm, note: %[1]s}]
 		t.Fatalf("the hostile record is refused: %v", lib.Findings)
 	}
 	in := inputOf(lib)
+	hostile := changes.Change{ID: "x", Name: nasty, Was: nasty, Change: changes.Renamed, Meaning: []string{nasty}, Fields: []changes.Field{{Path: nasty, OldText: nasty, NewText: nasty}}}
+	in.Changes = func() *changes.Report {
+		flips := []changes.Flip{{Title: nasty, Document: nasty, Material: nasty, Old: nasty, New: nasty}}
+		return &changes.Report{Old: nasty, New: nasty, Materials: []changes.Change{hostile}, Verdicts: flips, Margins: flips,
+			Studies: []changes.Moved{{Title: nasty}}, Documents: []changes.Affected{{Path: nasty, Title: nasty, Materials: []string{nasty}}}}
+	}
+	in.Editions = func() []changes.Row { return []changes.Row{{Name: nasty, Report: in.Changes()}} }
+	in.History = func(string) []changes.Entry {
+		return []changes.Entry{{Statement: nasty, Reason: nasty, Author: nasty, Reviewer: nasty, Status: nasty, Date: nasty, Change: &hostile}}
+	}
 	in.Findings = append(in.Findings, place.Finding{Severity: place.Warning, Message: nasty, Code: "x"})
 	for name, text := range render(t, in) {
 		if strings.HasSuffix(name, ".html") && (strings.Contains(text, "<script>alert") || strings.Contains(text, "<img") || strings.Contains(text, "{{") && strings.Contains(text, "alert(1)</script>")) {

@@ -69,6 +69,11 @@ func SourcesOf(lib *library.Library, r *material.Record) []SourceRow {
 			add(*s.Source)
 		}
 	}
+	for _, e := range r.Equivalents {
+		if e.Source != nil {
+			add(*e.Source)
+		}
+	}
 	return rows
 }
 

@@ -31,6 +31,8 @@ type Statement struct {
 	Measured       []Measured // one for each data set of measured points
 	Classes        Grid       // tolerance classes of a thermometer
 	Lots           *Lots      // nil when no lots are recorded
+	Equivalents    []EquivalentRow
+	Declarations   []DeclarationRow
 	Limits         []LimitRow // class figures held against the curve
 	NotStated      []string   // "limits of beta", "condition"
 	Caveats        []string
@@ -110,6 +112,8 @@ func Of(lib *library.Library, r *material.Record) *Statement {
 	b.measured()
 	b.classes()
 	b.lots()
+	b.equivalents()
+	b.declarations()
 	b.figures()
 	s.Sources = SourcesOf(lib, r)
 	return s

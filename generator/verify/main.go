@@ -92,7 +92,7 @@ func fuzz() error {
 				continue
 			}
 			name = "Fuzz" + name[:strings.IndexByte(name, '(')]
-			if err := command("go", "test", "-run", "^$", "-fuzz", "^"+name+"$", "-fuzztime", fuzzTime(), "./"+filepath.ToSlash(filepath.Dir(file)))(); err != nil {
+			if err := command("go", "test", "-run", "^$", "-fuzz", "^"+name+"$", "-fuzztime", fuzzTime(), "-fuzzminimizetime", "10x", "./"+filepath.ToSlash(filepath.Dir(file)))(); err != nil {
 				return fmt.Errorf("%s: %w", name, err)
 			}
 		}
