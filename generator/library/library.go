@@ -32,6 +32,13 @@ type Settings struct {
 	DocumentPrefix                        string
 	Guides, Reports                       []string // reading order, stems
 	PDF                                   bool
+	Rates                                 []Rate // exchange rates
+}
+
+// Rate is one dated exchange rate: one unit of From in units of To.
+type Rate struct {
+	From, To, Date, Source string
+	Rate                   float64
 }
 
 // A Source is one entry of materials/sources.yaml.

@@ -69,4 +69,4 @@ func csvReason(err error) string {
 
 // LeaveOutOffers forgets every price: what is computed and written afterwards
 // may go to customers.
-func (l *Library) LeaveOutOffers() { l.Offers = nil }
+func (l *Library) LeaveOutOffers() { l.Offers, l.Settings.Rates = nil, nil }

@@ -72,6 +72,10 @@ func (l *loader) settings() {
 	}
 	s.Guides, s.Reports = texts(n.Get("reading_order").Get("guides")), texts(n.Get("reading_order").Get("reports"))
 	s.PDF = n.Get("pdf").Yes()
+	for _, r := range n.Get("exchange_rates").List() {
+		rate, _ := r.Get("rate").Number()
+		s.Rates = append(s.Rates, Rate{From: r.Get("from").Text(), To: r.Get("to").Text(), Date: r.Get("date").Text(), Source: r.Get("source").Text(), Rate: rate})
+	}
 }
 
 func texts(n *form.Node) []string {

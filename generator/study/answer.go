@@ -100,6 +100,9 @@ func (w *work) unit(doc *NumberDoc) quantity.Unit {
 	if doc.Kind == quantity.Resistivity {
 		return w.houseResistivity()
 	}
+	if u, ok := w.units[doc.Name]; ok {
+		return u
+	}
 	return w.kind.index[doc.Name].unit
 }
 
@@ -145,12 +148,10 @@ func (w *work) head(name string) string {
 		head = inWords(name)
 	}
 	switch {
-	case doc.Kind == quantity.Resistivity:
-		return head + ", " + w.houseResistivity().Symbol
 	case doc.Unit == "" || doc.Kind == quantity.Ratio && doc.Unit == "ppm":
 		return head
 	}
-	return head + ", " + doc.Unit
+	return head + ", " + w.unit(doc).Symbol
 }
 
 // numbersTable has one row a material and one column a number; a column that

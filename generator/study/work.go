@@ -19,8 +19,9 @@ type work struct {
 	report *place.List
 	kind   Kind
 	out    *Outcome
-	failed bool          // a finding stops the study
-	house  quantity.Unit // of resistivity
+	failed bool                     // a finding stops the study
+	house  quantity.Unit            // of resistivity
+	units  map[string]quantity.Unit // of numbers that have others than usual, by name
 }
 
 // fail adds a finding that stops the study.
