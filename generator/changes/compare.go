@@ -4,7 +4,7 @@ import "sort"
 
 // Compare tells what differs between two statements; the labels name them.
 func Compare(old, now *Statement, oldLabel, newLabel string) *Report {
-	r := &Report{Old: oldLabel, New: newLabel, Same: true, Materials: []Change{}, Verdicts: []Flip{}, Margins: []Flip{}, Studies: []Moved{}, Documents: []Affected{}}
+	r := &Report{Old: oldLabel, New: newLabel, Same: true, Materials: []Change{}, Verdicts: []Flip{}, Margins: []Flip{}, Studies: []Moved{}, Documents: []Affected{}, Sources: sourcesOf(old, now)}
 	pairs := pair(old, now)
 	for i := range pairs {
 		r.Same = r.Same && pairs[i].MeansTheSame()

@@ -249,3 +249,21 @@ func TestSizes(t *testing.T) {
 		t.Errorf("%+v", r.Studies)
 	}
 }
+
+// TestSources: a newer edition and another checked state are told, and are no
+// change of meaning of a material that does not cite them.
+func TestSources(t *testing.T) {
+	old := &Statement{Sources: []Source{{ID: "a", Text: "A", Checked: "original"}, {ID: "b", Text: "B", Checked: "memory"}, {ID: "c", Text: "C"}}}
+	now := &Statement{Sources: []Source{{ID: "a", Text: "A", Checked: "original", SupersededBy: "d"}, {ID: "b", Text: "B", Checked: "original"}, {ID: "d", Text: "D"}}}
+	r := Compare(old, now, "old", "new")
+	var told []string
+	for _, c := range r.Sources {
+		told = append(told, c.ID+" "+c.Change)
+	}
+	if strings.Join(told, ", ") != "a changed, b changed, c removed, d added" || r.Sources[0].field("superseded_by").New != "d" || !r.Same {
+		t.Errorf("%v %+v", told, r.Sources)
+	}
+	if text := r.Text(); !strings.Contains(text, "source b: changed\n  checked: memory → original\n") {
+		t.Error(text)
+	}
+}

@@ -48,7 +48,7 @@ func (s *Statement) Write(w *bytes.Buffer) error {
 		w.Truncate(w.Len() - 1)
 	}
 	w.WriteString("\n],")
-	err = errors.Join(err, put("studies", s.Studies), put("documents", s.Documents))
+	err = errors.Join(err, put("studies", s.Studies), put("documents", s.Documents), put("sources", s.Sources))
 	w.WriteByte('\n')
 	fmt.Fprintf(w, "%s%s\"}\n", sumKey, sumOf(w.Bytes()[start:]))
 	return err

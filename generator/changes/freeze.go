@@ -23,8 +23,12 @@ import (
 // is stated when it is asked for, so that the whole is never held in memory.
 func Freeze(lib *library.Library, outcomes map[string][]*study.Outcome, edition string) *Statement {
 	s := &Statement{Format: Format, Edition: edition, Title: lib.Settings.Title, Organisation: lib.Settings.Organisation,
-		lib: lib, live: append([]*material.Record{}, lib.Materials...), Studies: []Study{}, Documents: []Document{}}
+		lib: lib, live: append([]*material.Record{}, lib.Materials...), Studies: []Study{}, Documents: []Document{}, Sources: []Source{}}
 	sort.Slice(s.live, func(i, j int) bool { return s.live[i].ID < s.live[j].ID }) // not as their files: "-" comes before "."
+	for _, id := range lib.SourceIDs {
+		src := lib.Source(id)
+		s.Sources = append(s.Sources, Source{id, statement.SourceText(src), string(src.Checked), src.SupersededBy, src.Note})
+	}
 	for _, d := range lib.Documents {
 		judged := outcomes[strings.TrimPrefix(d.Room+"/"+d.Stem, "/")]
 		path := documentPath(d)

@@ -227,7 +227,14 @@ func (r *Report) Text() string {
 	}
 	r.flipText(&b, "verdicts that differ, by lost margin", r.Verdicts)
 	for i := range r.Materials {
-		r.Materials[i].write(&b)
+		if r.Materials[i].Change != Unchanged {
+			b.WriteByte('\n')
+			r.Materials[i].write(&b)
+		}
+	}
+	for i := range r.Sources {
+		fmt.Fprint(&b, "\nsource ")
+		r.Sources[i].write(&b)
 	}
 	r.flipText(&b, "margins that moved", r.Margins)
 	for _, s := range r.Studies {
@@ -260,10 +267,7 @@ func (r *Report) flipText(b *strings.Builder, head string, list []Flip) {
 }
 
 func (c *Change) write(b *strings.Builder) {
-	if c.Change == Unchanged {
-		return
-	}
-	fmt.Fprintf(b, "\n%s: %s\n", c.ID, c.Head())
+	fmt.Fprintf(b, "%s: %s\n", c.ID, c.Head())
 	for _, s := range c.Effects() {
 		fmt.Fprintf(b, "  %s\n", s)
 	}

@@ -11,6 +11,7 @@ type Report struct {
 	Margins   []Flip     `json:"margins"`   // the same verdict on another margin, by lost margin
 	Studies   []Moved    `json:"studies"`   // added and removed
 	Documents []Affected `json:"documents"` // that rest on what changed
+	Sources   []Change   `json:"sources"`   // those that differ
 }
 
 // What happened to a material.

@@ -24,6 +24,7 @@ type Statement struct {
 	Materials    []Material `json:"materials"` // sorted by ID
 	Studies      []Study    `json:"studies"`   // in the order of documents
 	Documents    []Document `json:"documents"` // those that rest on a material
+	Sources      []Source   `json:"sources"`   // sorted by ID
 
 	// Instead of Materials, one of these: the records of a library that is
 	// stated as asked for, or the lines of a file that was opened.
@@ -95,6 +96,15 @@ type Verdict struct {
 	Verdict      string              `json:"verdict"`
 	Requirements []study.Requirement `json:"requirements"`
 	Evidence     []study.Evidence    `json:"evidence"`
+}
+
+// Source is one source as it was recorded.
+type Source struct {
+	ID           string `json:"id"`
+	Text         string `json:"text"` // author, title, number, publisher, edition, year
+	Checked      string `json:"checked"`
+	SupersededBy string `json:"superseded_by,omitempty"`
+	Note         string `json:"note,omitempty"`
 }
 
 // Document is a page whose words or studies rest on materials.

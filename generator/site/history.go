@@ -90,6 +90,7 @@ type changesPage struct {
 	Rows             []changeRow
 	Verdicts, Margin []flipRow
 	Documents        []affectedRow
+	Sources          []changeRow
 }
 
 // affectedRow is a document that rests on what changed.
@@ -114,6 +115,11 @@ func (s *site) changes() output.Output {
 			}
 		}
 		p.Documents = s.affected(p.Report.Documents)
+		for i := range p.Report.Sources {
+			row := s.changeRow(&p.Report.Sources[i])
+			row.Path = "" // it leads to the list of sources, which the page names
+			p.Sources = append(p.Sources, row)
+		}
 		p.Verdicts, p.Margin = s.flips(p.Report.Verdicts), s.flips(p.Report.Margins)
 		return p
 	})
