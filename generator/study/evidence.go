@@ -22,10 +22,15 @@ func windowText(lo, hi float64) string {
 }
 
 func evidenceOf(lib *library.Library, r *material.Record) Evidence {
+	return evidenceFrom(lib, r, r.Adopted)
+}
+
+// evidenceFrom names the data set that was used.
+func evidenceFrom(lib *library.Library, r *material.Record, set *material.DataSet) Evidence {
 	e := Evidence{Record: r.ID, Revision: r.Revision, Fingerprint: r.Fingerprint, Status: string(r.Status), Checked: "not stated"}
-	if r.Adopted != nil {
-		e.Data = r.Adopted.Name
-		if c := lib.CheckedOf(r.Adopted.Source); c != "" {
+	if set != nil {
+		e.Data = set.Name
+		if c := lib.CheckedOf(set.Source); c != "" {
 			e.Checked = string(c)
 		}
 	}

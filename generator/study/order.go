@@ -23,6 +23,7 @@ var orderKind = Kind{
 		"coefficient with its window, certificate, test method. What the record does not state stands as a gap to fill.",
 	Fields: []form.Field{
 		needed("material", form.Text, "ID of the record.", "cumn12ni"),
+		field("data", form.Text, "Data set that is ordered by; one of class specified when it is missing.", "jis-class-aa"),
 		field("form", form.OneOf("strip", "sheet", "foil", "wire", "bar"), "Only sizes of this form.", "strip"),
 		field("by", form.OneOf(byResistivity, byLength), "Which electrical property governs; resistivity when it is missing.", byLength),
 		field("certificate", form.Text, "Type of the certificate by EN 10204; 3.1 when it is missing (common practice).", "3.1"),
@@ -37,6 +38,12 @@ var orderKind = Kind{
 }
 
 var orderFindings = []place.Kind{
+	{
+		Code: "data-set-unknown", Severity: place.Error, Title: "A study names a data set that the record has not",
+		Explanation: "An order is written by one data set, the one whose standard the supplier is held to.",
+		Trigger:     triggerFence("study: order", "material: copper\ndata: class-b"),
+		Mend:        "write the name of a data set of that record",
+	},
 	{
 		Code: "part-geometry", Severity: place.Error, Title: "A part whose geometry is not told once",
 		Explanation: "A round part has a diameter, a flat one width and thickness; what is free must be one of them.",
@@ -64,7 +71,12 @@ func runOrder(w *work) {
 	if o.record = w.record(w.block.Get("material")); w.failed {
 		return
 	}
-	o.set = specifiedSet(o.record)
+	if o.set = specifiedSet(o.record); w.has("data") {
+		if o.set = o.record.Set(w.text("data", "")); o.set == nil {
+			w.fail("data-set-unknown", w.block.Get("data"), o.record.ID+" has no data set "+quote(w.text("data", "")), "write one of "+strings.Join(setNames(o.record), ", "))
+			return
+		}
+	}
 	table := Table{Caption: "Words for the order", Heads: []string{"Size", "text"}}
 	var answers []*answer
 	for _, s := range o.record.Stock {
@@ -105,10 +117,19 @@ func specifiedSet(r *material.Record) *material.DataSet {
 	return r.Adopted
 }
 
+func setNames(r *material.Record) []string {
+	var list []string
+	for _, s := range r.Sets {
+		list = append(list, s.Name)
+	}
+	return list
+}
+
 // size tells Ω/m of one stock with the limits of ρ and the dimensions.
 func (o *order) size(s material.Stock) *answer {
 	a := o.about(o.record)
 	a.Size = sizeText(s)
+	a.Evidence = []Evidence{evidenceFrom(o.lib, o.record, o.set)}
 	section := unknown()
 	switch {
 	case s.Diameter != nil:
@@ -184,6 +205,9 @@ func (o *order) designation() string {
 		to += ":" + src.Year
 	} else if !strings.Contains(src.Number, ":") && !strings.Contains(src.Number, "-20") && !strings.Contains(src.Number, "-19") {
 		to += " " + gap("edition")
+	}
+	if o.set.Source.Where != "" {
+		to += ", " + o.set.Source.Where
 	}
 	return text + to
 }
