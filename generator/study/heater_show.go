@@ -36,7 +36,7 @@ func (e *heating) tell() {
 	e.tellInrush()
 	e.tellService()
 	e.warnings()
-	if n, ok := a.spans["mass"]; ok {
+	if n, ok := a.spans["mass"]; ok && h.several {
 		a.rank = n.v
 	}
 }
@@ -151,7 +151,7 @@ func (h *heater) tables(answers []*answer) {
 	h.out.Tables = append(h.out.Tables,
 		h.numbersTables("The element", answers, "diameter", "thickness", "width", "resistance_per_length", "length", "wire_length", "resistance_cold", "temperature_factor", "resistance_hot", "mass")...)
 	h.out.Tables = append(h.out.Tables,
-		h.numbersTable("What it draws", answers, "element_temperature", "service_margin", "surface_load", "power", "power_min", "power_max", "inrush_current"))
+		h.numbersTable("What it draws", answers, "element_temperature", "service_margin", "surface_load", "power", "inrush_current"))
 	if t, asked := h.requirementsTable(answers); asked {
 		h.out.Tables = append(h.out.Tables, t)
 	}
@@ -211,7 +211,11 @@ func factorText(a *answer, kelvin float64) string {
 	case math.IsNaN(f.v):
 		return string(CannotBeTold)
 	}
-	return quantity.Fixed(f.v, max(3, min(4, s.RatioDecimals())))
+	decimals := s.RatioDecimals()
+	if s.Table != nil {
+		decimals = s.Table.Digits - 1 // as printed: one digit stands before the point
+	}
+	return quantity.Fixed(f.v, max(3, min(4, decimals)))
 }
 
 // chart draws R(T)/R at 20 °C with the temperature of the elements marked.

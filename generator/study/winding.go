@@ -119,9 +119,6 @@ func (g *winding) measure(r *material.Record) *answer {
 	computed := x.tellComputed()
 	x.tellCold(computed)
 	x.tellHot()
-	if n, ok := a.spans["resistance_20"]; ok {
-		a.rank = n.v
-	}
 	return a
 }
 
