@@ -2,6 +2,7 @@ package study
 
 import (
 	"math"
+	"strconv"
 
 	"ohmfolio/generator/form"
 	"ohmfolio/generator/quantity"
@@ -174,7 +175,7 @@ func (h *heater) notes() {
 		h.note("The ± of the power is not used for the size. Require power_min and power_max instead.")
 	}
 	if h.line.elements > 1 {
-		h.note("Resistance, length and surface load are those of one element of " + quantity.Number(h.line.elements, 3) + "; power and mass those of all.")
+		h.note("Resistance, length and surface load are those of one element of " + strconv.Itoa(int(h.line.elements)) + "; power and mass those of all.")
 	}
 	if h.several {
 		h.note("Ranked by mass, least first.")

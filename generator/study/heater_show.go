@@ -95,6 +95,9 @@ func (e *heating) warnings() {
 	if goal := e.target(); load > goal*(1+1e-6) {
 		a.warn("the surface load " + loadText(load) + " is above the " + loadText(goal) + " sized for")
 	}
+	if goal := e.target(); e.computed != nil && load < goal*muchLess {
+		a.warn("the size in stock carries " + loadText(load) + ", far below the " + loadText(goal) + " asked: " + e.computed.text() + " would do")
+	}
 	if b, ok := findBuild(e.h.text("build", "")); ok && (load < b.low || load > b.high) {
 		a.warn("the surface load " + loadText(load) + " lies outside what is common practice for " + b.name + ", " + loadText(b.low) + " to " + loadText(b.high))
 	}
@@ -105,6 +108,9 @@ func (e *heating) warnings() {
 		a.warn("the size is computed and is nobody's stock")
 	}
 }
+
+// muchLess of the surface load asked is a size in stock that wastes material.
+const muchLess = 0.5
 
 func loadText(si float64) string {
 	u, _ := quantity.FindUnit(quantity.SurfaceLoad, "W/cm²")

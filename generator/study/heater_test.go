@@ -197,6 +197,19 @@ func TestHeaterStockAndBands(t *testing.T) {
 	}
 }
 
+// TestHeaterStockTooLarge at both sides of half the load asked.
+func TestHeaterStockTooLarge(t *testing.T) {
+	base := "materials: [stocked]\nvoltage: 240 V\npower: 750 W\nelement_temperature: 900 °C\nsurface_load: "
+	q := *told(t, "heater", base+"2 W/cm²").Numbers["surface_load"].Value
+	for factor, warned := range map[float64]bool{1.99: false, 2.01: true} {
+		m := told(t, "heater", base+fmt.Sprintf("%.9f W/cm²", factor*q))
+		near(t, "still 0.8 mm", m, 1e-9, map[string]float64{"diameter": 0.8})
+		if got := strings.Contains(strings.Join(m.Warnings, "; "), "would do"); got != warned {
+			t.Errorf("%g: %v", factor, m.Warnings)
+		}
+	}
+}
+
 // TestHeaterConnections: the same power; what one element and one line get.
 func TestHeaterConnections(t *testing.T) {
 	for connection, want := range map[string][2]float64{ // R of one element, line current cold

@@ -217,7 +217,7 @@ func (x *wound) tellLaw() {
 	x.a.tell("zero_resistance_temperature", zero)
 	own := x.law.ownZero()
 	if off := zero.v - own; !math.IsNaN(own) && math.Abs(off) > otherMetal {
-		x.a.warn("the constant " + x.g.constant + " lies " + quantity.Fixed(math.Abs(off), 1) + quantity.NarrowSpace + "K from the material's own " + quantity.CelsiusText(own) + ": is it another metal's?")
+		x.a.warn("the constant " + x.g.constant + " lies " + quantity.Fixed(math.Abs(off), 1) + quantity.NarrowSpace + "K from the material's own " + quantity.Fixed(own-quantity.ZeroCelsius, 1) + quantity.NarrowSpace + "°C: is it another metal's?")
 	}
 }
 
