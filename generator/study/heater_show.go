@@ -95,6 +95,9 @@ func (e *heating) warnings() {
 	if goal := e.target(); load > goal*(1+1e-6) {
 		a.warn("the surface load " + loadText(load) + " is above the " + loadText(goal) + " sized for")
 	}
+	if e.hot > e.h.hot+hotter {
+		a.warn("the element gets " + quantity.Fixed(e.hot-quantity.ZeroCelsius, 0) + quantity.NarrowSpace + "°C, above the " + quantity.CelsiusText(e.h.hot) + " asked")
+	}
 	if goal := e.target(); e.computed != nil && load < goal*muchLess {
 		a.warn("the size in stock carries " + loadText(load) + ", far below the " + loadText(goal) + " asked: " + e.computed.text() + " would do")
 	}
@@ -108,6 +111,9 @@ func (e *heating) warnings() {
 		a.warn("the size is computed and is nobody's stock")
 	}
 }
+
+// hotter than asked by more than this is told.
+const hotter = 0.5 // K
 
 // muchLess of the surface load asked is a size in stock that wastes material.
 const muchLess = 0.5

@@ -236,6 +236,20 @@ func TestHeaterConvection(t *testing.T) {
 	near(t, "q/h above ambient", m, 1e-6, map[string]float64{"element_temperature": 120, "surface_load": 0.6, "temperature_factor": 1.01})
 }
 
+// TestHeaterHotterThanAsked: at h = 60 W/(m²·K) and ambient 20 °C a load of
+// 0.6 W/cm² makes 120 °C.
+func TestHeaterHotterThanAsked(t *testing.T) {
+	for asked, warned := range map[string]bool{"119 °C": true, "119.6 °C": false, "130 °C": false} {
+		m := told(t, "heater", "materials: [nicr109]\nvoltage: 48 V\npower: 100 W\nelement_temperature: "+asked+"\nconvection: {coefficient: 60 W/(m²·K), ambient: 20 °C}\ndiameter: 0.683677 mm\nstock: no")
+		if got := *m.Numbers["element_temperature"].Value; math.Abs(got-120) > 0.05 {
+			t.Errorf("the element has %g °C", got)
+		}
+		if got := strings.Contains(strings.Join(m.Warnings, "; "), " asked"); got != warned {
+			t.Errorf("%s: %v", asked, m.Warnings)
+		}
+	}
+}
+
 // TestHeaterVerdicts at both sides of every threshold.
 func TestHeaterVerdicts(t *testing.T) {
 	for _, c := range []struct {

@@ -140,7 +140,7 @@ func (x *wound) drawn(c cooled) {
 
 // tables: the numbers; R over temperature; what another constant would make of it.
 func (g *winding) tables(answers []*answer) {
-	tables := g.numbersTables("The winding", answers, "length", "mass", "resistance_20", "against_computed", "resistance_hot", "temperature", "rise", "zero_resistance_temperature")
+	tables := g.numbersTables("The winding", answers, "length", "mass", "fill", "resistance_20", "against_computed", "resistance_hot", "temperature", "rise", "zero_resistance_temperature")
 	if t := g.constants(answers); len(t.Rows) > 1 {
 		tables = append(tables, t)
 	}
