@@ -173,7 +173,13 @@ func usedBy(in *Input) map[string][]statement.Use {
 				if m.Verdict != study.NotAsked {
 					what = m.Verdict.Shown()
 				}
-				add(m.Material, what)
+				if m.Material != "" {
+					add(m.Material, what)
+					continue
+				}
+				for _, e := range m.Evidence { // an answer about several
+					add(e.Record, what)
+				}
 			}
 		}
 		for _, n := range d.Page.Numbers {

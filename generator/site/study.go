@@ -224,11 +224,26 @@ func answerPrint(o *study.Outcome) string {
 	return text[:4] + "-" + text[4:]
 }
 
+func pointsOf(s study.Series, ink int) figure.Points {
+	p := figure.Points{Label: s.Label, Ink: ink}
+	for i, x := range s.X {
+		p.List = append(p.List, figure.Point{X: x, Y: s.Y[i]})
+	}
+	return p
+}
+
 // chartFigure gives each series an ink and a dash; after four inks the dashes
 // move on, so that sixteen curves can be told apart in grey.
 func chartFigure(c study.Chart, id string) *figure.Figure {
 	f := &figure.Figure{ID: id, Title: c.Title, Description: c.Description, XTitle: c.XTitle, YTitle: c.YTitle, Width: 720, Height: 400}
+	for _, x := range c.Marks {
+		f.Marks = append(f.Marks, figure.Mark{X: x})
+	}
 	for i, s := range c.Series {
+		if s.Apart {
+			f.Points = append(f.Points, pointsOf(s, i%4+1))
+			continue
+		}
 		ink, dash := i%4+1, (i+i/4)%4+1
 		bandLabel := s.Label
 		if len(s.Y) > 0 {

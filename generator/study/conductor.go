@@ -26,6 +26,14 @@ func round(d span) section {
 	}
 }
 
+// text tells the nominal size.
+func (s section) text() string {
+	if s.diameter.known() {
+		return "⌀ " + millimetres(s.diameter.v)
+	}
+	return millimetres(s.thickness.v) + " × " + millimetres(s.width.v)
+}
+
 // flat is a strip; its edges count as surface when edges is 1, and not when it is 0.
 func flat(t, w span, edges float64) section {
 	return section{

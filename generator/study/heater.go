@@ -75,7 +75,7 @@ var heaterKind = Kind{
 		{"wire_length", quantity.Length, "m", 4, "to cut", "Length to cut for one element, lead-ins included."},
 		{"resistance_per_length", quantity.ResistancePerLength, "Ω/m", 4, "Ω/m cold", "Resistance per metre at 20 °C."},
 		{"surface_load", quantity.SurfaceLoad, "W/cm²", 3, "surface load", "Power over the surface of the heated length."},
-		{"power", quantity.Power, "W", 4, "power", "Power of all elements, hot."},
+		{"power", quantity.Power, "W", 4, "power (least to greatest)", "Power of all elements, hot, with the least and the greatest."},
 		{"power_min", quantity.Power, "W", 4, "least power", "Least power: lowest voltage, highest resistance."},
 		{"power_max", quantity.Power, "W", 4, "greatest power", "Greatest power: highest voltage, lowest resistance."},
 		{"inrush_current", quantity.Current, "A", 3, "inrush", "Greatest current of a line at switching on: highest voltage, lowest resistance at the start temperature."},
@@ -103,6 +103,7 @@ type heater struct {
 	edges          float64 // 1 or 0
 	leads          leads
 	tolerance      *quantity.Quantity
+	several        bool // materials, which are then ranked by mass
 }
 
 // leads are the cold ends of one element: length is that of both ends.
@@ -147,6 +148,7 @@ func runHeater(w *work) {
 	}
 	u := h.elementVoltage(h.voltage).v
 	h.aim = u * u / h.elementPower()
+	h.several = len(records) > 1
 	h.notes()
 	answers := w.each(records, func(r *material.Record) []*answer { return []*answer{h.size(r)} })
 	w.finish(answers)

@@ -2,6 +2,7 @@ package study
 
 import (
 	"math"
+	"strconv"
 
 	"ohmfolio/generator/form"
 	"ohmfolio/generator/quantity"
@@ -173,11 +174,17 @@ func (h *heater) notes() {
 	if h.power.wide() {
 		h.note("The ± of the power is not used for the size. Require power_min and power_max instead.")
 	}
+	if h.line.elements > 1 {
+		h.note("Resistance, length and surface load are those of one element of " + strconv.Itoa(int(h.line.elements)) + "; power and mass those of all.")
+	}
+	if h.several {
+		h.note("Ranked by mass, least first.")
+	}
 	if h.leads.length > 0 {
 		h.note("Lead-ins are of the same wire and stay at " + quantity.CelsiusText(twenty) + ".")
 	}
 	if !h.has("resistance_tolerance") {
-		h.note("No tolerance of the resistance per metre is given: the limits of the resistivity and of the size in stock make the band. ± 5 %, for thin wire ± 8 %, is common practice.")
+		h.note("No tolerance of the resistance per metre is given: the band is made of what the stock states for it, otherwise of the limits of the resistivity and of the size. ± 5 %, for thin wire ± 8 %, is common practice.")
 	}
 	h.note("The band of the power keeps the element at one temperature. Coiling stretches the wire and raises its resistance; it is not in the numbers.")
 }

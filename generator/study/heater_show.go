@@ -36,7 +36,7 @@ func (e *heating) tell() {
 	e.tellInrush()
 	e.tellService()
 	e.warnings()
-	if n, ok := a.spans["mass"]; ok {
+	if n, ok := a.spans["mass"]; ok && h.several {
 		a.rank = n.v
 	}
 }
@@ -95,6 +95,12 @@ func (e *heating) warnings() {
 	if goal := e.target(); load > goal*(1+1e-6) {
 		a.warn("the surface load " + loadText(load) + " is above the " + loadText(goal) + " sized for")
 	}
+	if e.hot > e.h.hot+hotter {
+		a.warn("the element gets " + quantity.Fixed(e.hot-quantity.ZeroCelsius, 0) + quantity.NarrowSpace + "°C, above the " + quantity.CelsiusText(e.h.hot) + " asked")
+	}
+	if goal := e.target(); e.computed != nil && load < goal*muchLess {
+		a.warn("the size in stock carries " + loadText(load) + ", far below the " + loadText(goal) + " asked: " + e.computed.text() + " would do")
+	}
 	if b, ok := findBuild(e.h.text("build", "")); ok && (load < b.low || load > b.high) {
 		a.warn("the surface load " + loadText(load) + " lies outside what is common practice for " + b.name + ", " + loadText(b.low) + " to " + loadText(b.high))
 	}
@@ -105,6 +111,12 @@ func (e *heating) warnings() {
 		a.warn("the size is computed and is nobody's stock")
 	}
 }
+
+// hotter than asked by more than this is told.
+const hotter = 0.5 // K
+
+// muchLess of the surface load asked is a size in stock that wastes material.
+const muchLess = 0.5
 
 func loadText(si float64) string {
 	u, _ := quantity.FindUnit(quantity.SurfaceLoad, "W/cm²")
@@ -151,7 +163,7 @@ func (h *heater) tables(answers []*answer) {
 	h.out.Tables = append(h.out.Tables,
 		h.numbersTables("The element", answers, "diameter", "thickness", "width", "resistance_per_length", "length", "wire_length", "resistance_cold", "temperature_factor", "resistance_hot", "mass")...)
 	h.out.Tables = append(h.out.Tables,
-		h.numbersTable("What it draws", answers, "element_temperature", "service_margin", "surface_load", "power", "power_min", "power_max", "inrush_current"))
+		h.numbersTable("What it draws", answers, "element_temperature", "service_margin", "surface_load", "power", "inrush_current"))
 	if t, asked := h.requirementsTable(answers); asked {
 		h.out.Tables = append(h.out.Tables, t)
 	}
@@ -211,7 +223,11 @@ func factorText(a *answer, kelvin float64) string {
 	case math.IsNaN(f.v):
 		return string(CannotBeTold)
 	}
-	return quantity.Fixed(f.v, max(3, min(4, s.RatioDecimals())))
+	decimals := s.RatioDecimals()
+	if s.Table != nil {
+		decimals = s.Table.Digits - 1 // as printed: one digit stands before the point
+	}
+	return quantity.Fixed(f.v, max(3, min(4, decimals)))
 }
 
 // chart draws R(T)/R at 20 °C with the temperature of the elements marked.

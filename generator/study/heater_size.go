@@ -14,11 +14,12 @@ type heating struct {
 
 	rho      span // at 20 °C, Ω·m
 	section  section
-	perMetre span    // Ω/m at 20 °C
-	hot      float64 // K
-	factor   span    // R(hot)/R(20 °C)
-	length   span    // heated, m
-	from     string  // where the size comes from
+	perMetre span     // Ω/m at 20 °C
+	hot      float64  // K
+	factor   span     // R(hot)/R(20 °C)
+	length   span     // heated, m
+	from     string   // where the size comes from
+	computed *section // that the stock size stands for; nil when none was computed
 }
 
 func (h *heater) elementVoltage(u span) span { return u.scale(h.line.voltage) }
@@ -150,7 +151,7 @@ func (e *heating) take(ideal section) bool {
 	if best == nil {
 		return e.build(ideal, nil)
 	}
-	e.from = "stock"
+	e.from, e.computed = "stock", &ideal
 	return e.build(e.sectionOf(*best), best)
 }
 

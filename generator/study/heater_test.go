@@ -197,6 +197,19 @@ func TestHeaterStockAndBands(t *testing.T) {
 	}
 }
 
+// TestHeaterStockTooLarge at both sides of half the load asked.
+func TestHeaterStockTooLarge(t *testing.T) {
+	base := "materials: [stocked]\nvoltage: 240 V\npower: 750 W\nelement_temperature: 900 °C\nsurface_load: "
+	q := *told(t, "heater", base+"2 W/cm²").Numbers["surface_load"].Value
+	for factor, warned := range map[float64]bool{1.99: false, 2.01: true} {
+		m := told(t, "heater", base+fmt.Sprintf("%.9f W/cm²", factor*q))
+		near(t, "still 0.8 mm", m, 1e-9, map[string]float64{"diameter": 0.8})
+		if got := strings.Contains(strings.Join(m.Warnings, "; "), "would do"); got != warned {
+			t.Errorf("%g: %v", factor, m.Warnings)
+		}
+	}
+}
+
 // TestHeaterConnections: the same power; what one element and one line get.
 func TestHeaterConnections(t *testing.T) {
 	for connection, want := range map[string][2]float64{ // R of one element, line current cold
@@ -221,6 +234,20 @@ func TestHeaterLeads(t *testing.T) {
 func TestHeaterConvection(t *testing.T) {
 	m := told(t, "heater", "materials: [limited]\nvoltage: 48 V\npower: 100 W\nsurface_load: 0.6 W/cm²\nconvection: {coefficient: 60 W/(m²·K), ambient: 20 °C}\nstock: no")
 	near(t, "q/h above ambient", m, 1e-6, map[string]float64{"element_temperature": 120, "surface_load": 0.6, "temperature_factor": 1.01})
+}
+
+// TestHeaterHotterThanAsked: at h = 60 W/(m²·K) and ambient 20 °C a load of
+// 0.6 W/cm² makes 120 °C.
+func TestHeaterHotterThanAsked(t *testing.T) {
+	for asked, warned := range map[string]bool{"119 °C": true, "119.6 °C": false, "130 °C": false} {
+		m := told(t, "heater", "materials: [nicr109]\nvoltage: 48 V\npower: 100 W\nelement_temperature: "+asked+"\nconvection: {coefficient: 60 W/(m²·K), ambient: 20 °C}\ndiameter: 0.683677 mm\nstock: no")
+		if got := *m.Numbers["element_temperature"].Value; math.Abs(got-120) > 0.05 {
+			t.Errorf("the element has %g °C", got)
+		}
+		if got := strings.Contains(strings.Join(m.Warnings, "; "), " asked"); got != warned {
+			t.Errorf("%s: %v", asked, m.Warnings)
+		}
+	}
 }
 
 // TestHeaterVerdicts at both sides of every threshold.

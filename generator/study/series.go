@@ -126,9 +126,9 @@ func (w *work) partArea() (span, bool) {
 	return a, hasArea
 }
 
-// aboutAll begins the one answer, which is about several records.
+// aboutAll begins the one answer; about several records it names none.
 func (s *series) aboutAll() *answer {
-	var a *answer
+	var all *answer
 	ids := map[string]bool{}
 	for _, p := range s.parts {
 		if ids[p.record.ID] {
@@ -136,21 +136,19 @@ func (s *series) aboutAll() *answer {
 		}
 		ids[p.record.ID] = true
 		one := s.about(p.record)
-		if a == nil {
-			a = one
+		for i, text := range one.Warnings {
+			one.Warnings[i] = p.record.ShortName() + ": " + text
+		}
+		if all == nil {
+			all = one
 			continue
 		}
-		a.Material += " + " + p.record.ID
-		a.Evidence = append(a.Evidence, one.Evidence...)
-		for _, text := range one.Warnings {
-			a.warn(p.record.ShortName() + ": " + text)
-		}
+		all.Material, all.Record = "", nil
+		all.Evidence = append(all.Evidence, one.Evidence...)
+		all.Warnings = append(all.Warnings, one.Warnings...)
 	}
-	a.Name = s.out.Title
-	if len(ids) > 1 {
-		a.Record = nil
-	}
-	return a
+	all.Name = s.out.Title
+	return all
 }
 
 // measure adds the parts up and names the numbers.

@@ -3,6 +3,7 @@ package study
 import (
 	"math"
 	"sort"
+	"strings"
 
 	"ohmfolio/generator/curve"
 	"ohmfolio/generator/material"
@@ -139,6 +140,7 @@ func (s *series) show(a *answer, sum *material.DataSet) {
 		t.Heads[0], t.Links = "series", nil
 		s.out.Tables = append(s.out.Tables, t)
 	}
+	s.out.Tables = append(s.out.Tables, s.given())
 	if sum == nil {
 		return
 	}
@@ -150,21 +152,45 @@ func (s *series) show(a *answer, sum *material.DataSet) {
 	s.chart(sum, lo, hi)
 }
 
+// given tells what the parts are, as they were written, and their resistance.
+func (s *series) given() Table {
+	t := Table{Caption: "The parts at " + quantity.CelsiusText(s.reference), Heads: []string{"part", "material", "as given", "R, mΩ", "α, ppm/K"}}
+	for _, p := range s.parts {
+		var text []string
+		for i, key := range p.node.Keys() {
+			if key != "name" && key != "material" {
+				text = append(text, inWords(key)+" "+p.node.List()[i].Text())
+			}
+		}
+		row := []string{p.name, p.record.ShortName(), strings.Join(text, ", "), string(CannotBeTold), string(CannotBeTold)}
+		if p.r.known() {
+			row[3] = quantity.Number(p.r.v*1e3, 4)
+		}
+		if set := p.record.Adopted; set != nil && set.Ratio.HasNominal() {
+			if alpha, _ := constants(set.Ratio.Nominal, s.reference); !math.IsNaN(alpha) {
+				row[4] = quantity.PPMText(alpha)
+			}
+		}
+		t.Rows, t.Links = append(t.Rows, row), append(t.Links, p.record.ID)
+	}
+	return t
+}
+
 // shares tells what each part contributes at the edges and at the reference.
 func (s *series) shares(sum *material.DataSet, lo, hi float64) Table {
-	t := Table{Caption: "Share of each part", Heads: []string{"part", "R, mΩ", "share of R at " + quantity.CelsiusText(lo), "at " + quantity.CelsiusText(s.reference), "at " + quantity.CelsiusText(hi),
-		"its α, ppm/K", "its part of effective α, ppm/K", "its part of the change at " + quantity.CelsiusText(lo), "at " + quantity.CelsiusText(hi)}}
+	t := Table{Caption: "Share of each part", Heads: []string{"part", "share of R at " + quantity.CelsiusText(lo), "at " + quantity.CelsiusText(s.reference), "at " + quantity.CelsiusText(hi),
+		"its part of effective α, ppm/K", "its part of the change at " + quantity.CelsiusText(lo), "at " + quantity.CelsiusText(hi)}}
 	total, _ := sum.Ratio.Nominal.At(s.reference)
 	percent := func(x float64) string { return quantity.Fixed(100*x, 2) + quantity.NarrowSpace + "%" }
 	for _, p := range s.parts {
 		alpha, _ := constants(p.record.Adopted.Ratio.Nominal, s.reference)
-		row := []string{p.name, quantity.Number(p.r.v*1e3, 4)}
+		row := []string{p.name}
 		for _, at := range []float64{lo, s.reference, hi} {
 			all, _ := sum.Ratio.Nominal.At(at)
 			row = append(row, percent(p.r.v*ratioAt(p.record.Adopted, at, s.reference).v/all))
 		}
 		share := p.r.v / total
-		row = append(row, quantity.PPMText(alpha), quantity.PPMText(share*alpha))
+		row = append(row, quantity.PPMText(share*alpha))
 		for _, at := range []float64{lo, hi} {
 			row = append(row, quantity.ChangeText(share*(ratioAt(p.record.Adopted, at, s.reference).v-1)))
 		}

@@ -157,8 +157,8 @@ func TestSeriesMissing(t *testing.T) {
 		}
 	}
 	m := chain(t, "parts: [{material: copper, resistance: 1 Ω}, {material: flat, resistance: 1 Ω}, {material: copper, resistance: 1 Ω}]\nwindow: 0 °C to 60 °C")
-	if len(m.Evidence) != 2 || m.Material != "copper + flat" {
-		t.Errorf("%s rests on %v", m.Material, m.Evidence)
+	if len(m.Evidence) != 2 || m.Material != "" || m.Name != "Parts in series" {
+		t.Errorf("%s rests on %v", m.Name, m.Evidence)
 	}
 }
 

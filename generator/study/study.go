@@ -130,6 +130,7 @@ type Series struct {
 	Label        string
 	X, Y         []float64 // no Y when there is a band and no nominal
 	Lower, Upper []float64 // nil when there is no band
+	Apart        bool      // measured points, not joined
 }
 
 // Table is a plain table of text: a caption, heads, rows.

@@ -37,6 +37,7 @@ var windingKind = Kind{
 		field("diameter_over_enamel", form.Quantity(quantity.Length), "Diameter over the enamel; needs enamel.", "0.56 mm"),
 		field("enamel", form.Quantity(quantity.Length), "Thickness of the enamel on one side.", "0.03 mm"),
 		field("strands", form.Integer, "Equal wires side by side; 1 when it is missing.", "2"),
+		field("winding_area", form.Quantity(quantity.Area), "Cross-section of the space that the winding fills, for the share of it that is metal.", "320 mm²"),
 		field("conductivity", form.Quantity(quantity.Conductivity), "Conductivity of the wire at 20 °C, where it is not that of the record.", "97 %IACS"),
 		field("class_temperature", form.Quantity(quantity.Temperature), "Temperature for the hot resistance.", "130 °C"),
 		field("cold_resistance", form.Quantity(quantity.Resistance), "Resistance of the cold winding.", "3.42 Ω"),
@@ -54,6 +55,7 @@ var windingKind = Kind{
 		{"rise", quantity.TemperatureDifference, "K", 4, "rise", "Average temperature less that of the coolant at the end."},
 		{"zero_resistance_temperature", quantity.Temperature, "°C", 4, "zero resistance at", "Where the straight line through R at 20 °C reaches zero."},
 		{"against_computed", quantity.Ratio, "%", 3, "read against computed", "Resistance at 20 °C from the cold reading, against the computed one."},
+		{"fill", quantity.Ratio, "%", 3, "metal in the winding area", "Cross-section of the metal of all turns over the winding area."},
 		{"length", quantity.Length, "m", 4, "wire", "Length of the wire."},
 		{"mass", quantity.Mass, "g", 3, "bare mass", "Mass of the bare wire."},
 	},
@@ -65,7 +67,9 @@ type winding struct {
 	*work
 	wire         section // bare
 	length       span
+	turns        float64 // 0 when the length is given
 	strands      float64
+	space        span // m², unknown when not given
 	conductivity span
 	class        float64 // K, NaN when not asked
 	r1, t1       span
@@ -119,9 +123,6 @@ func (g *winding) measure(r *material.Record) *answer {
 	computed := x.tellComputed()
 	x.tellCold(computed)
 	x.tellHot()
-	if n, ok := a.spans["resistance_20"]; ok {
-		a.rank = n.v
-	}
 	return a
 }
 
@@ -133,6 +134,9 @@ func (x *wound) tellComputed() span {
 	}
 	a.tell("length", g.length)
 	a.tellMass(g.wire.area.times(g.length).scale(g.strands))
+	if g.space.known() {
+		a.tell("fill", g.wire.area.scale(g.strands*g.turns).over(g.space))
+	}
 	var rho span
 	if g.conductivity.known() {
 		rho = g.conductivity.through(func(s float64) float64 { return 1 / s })
@@ -220,7 +224,7 @@ func (x *wound) tellLaw() {
 	x.a.tell("zero_resistance_temperature", zero)
 	own := x.law.ownZero()
 	if off := zero.v - own; !math.IsNaN(own) && math.Abs(off) > otherMetal {
-		x.a.warn("the constant " + x.g.constant + " lies " + quantity.Fixed(math.Abs(off), 1) + quantity.NarrowSpace + "K from the material's own " + quantity.CelsiusText(own) + ": is it another metal's?")
+		x.a.warn("the constant " + x.g.constant + " lies " + quantity.Fixed(math.Abs(off), 1) + quantity.NarrowSpace + "K from the material's own " + quantity.Fixed(own-quantity.ZeroCelsius, 1) + quantity.NarrowSpace + "°C: is it another metal's?")
 	}
 }
 

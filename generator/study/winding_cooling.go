@@ -125,7 +125,7 @@ func (x *wound) drawn(c cooled) {
 		return // one figure is enough: the readings are the same
 	}
 	last := x.g.readings[len(x.g.readings)-1].t
-	fit, read := Series{Label: "curve to switch-off"}, Series{Label: "readings"}
+	fit, read := Series{Label: "curve to switch-off"}, Series{Label: "readings", Apart: true}
 	for i := range seriesPoints {
 		t := float64(last * float64(i) / (seriesPoints - 1))
 		fit.X, fit.Y = append(fit.X, t), append(fit.Y, c.at(t))
@@ -134,13 +134,13 @@ func (x *wound) drawn(c cooled) {
 		read.X, read.Y = append(read.X, p.t), append(read.Y, p.r)
 	}
 	x.g.out.Charts = append(x.g.out.Charts, Chart{Title: "Cooling after switch-off", XTitle: "time in s", YTitle: "R in Ω",
-		Description: "Resistance of the winding after switch-off, joined readings and the curve through them, extrapolated to switch-off.",
+		Description: "Resistance of the winding after switch-off, the readings and the curve through them, extrapolated to switch-off.",
 		Series:      []Series{fit, read}})
 }
 
 // tables: the numbers; R over temperature; what another constant would make of it.
 func (g *winding) tables(answers []*answer) {
-	tables := g.numbersTables("The winding", answers, "length", "mass", "resistance_20", "against_computed", "resistance_hot", "temperature", "rise", "zero_resistance_temperature")
+	tables := g.numbersTables("The winding", answers, "length", "mass", "fill", "resistance_20", "against_computed", "resistance_hot", "temperature", "rise", "zero_resistance_temperature")
 	if t := g.constants(answers); len(t.Rows) > 1 {
 		tables = append(tables, t)
 	}

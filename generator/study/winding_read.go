@@ -12,6 +12,7 @@ func (g *winding) read() {
 	g.constant = g.text("constant", ownConstant)
 	g.strands = g.count("strands", 1, 1)
 	g.conductivity, _ = g.positive("conductivity")
+	g.space, _ = g.positive("winding_area")
 	g.class = math.NaN()
 	if g.has("class_temperature") {
 		g.class = kelvinOf(g.block.Get("class_temperature"))
@@ -30,7 +31,7 @@ func (g *winding) read() {
 }
 
 func (g *winding) readLength() {
-	turns := g.count("turns", 0, 1)
+	g.turns = g.count("turns", 0, 1)
 	mean, hasMean := g.positive("mean_turn")
 	length, hasLength := g.positive("length")
 	g.length = length
@@ -44,7 +45,7 @@ func (g *winding) readLength() {
 	case g.has("turns") != hasMean:
 		g.lacking("turns and mean turn go together", "turns with mean_turn", "length")
 	case hasMean:
-		g.length = mean.scale(turns)
+		g.length = mean.scale(g.turns)
 	}
 }
 
@@ -134,6 +135,7 @@ func (g *winding) whatIsThere() {
 	case g.length.known() != g.wire.area.known():
 		g.lacking("the length and the size of the wire go together", "length with diameter")
 	}
+	g.onlyWith(g.turns > 0, "the fill needs turns", "winding_area")
 	g.onlyWith(len(g.readings) > 0, "there are no readings", "extrapolation")
 	g.onlyWith(hot, "nothing was read hot", "coolant")
 	if g.text("extrapolation", "") == logarithmic && !g.coolant.known() {

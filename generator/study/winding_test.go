@@ -118,7 +118,8 @@ func TestConductivity(t *testing.T) {
 }
 
 func TestEnamel(t *testing.T) {
-	over := coil(t, "materials: [copper]\nturns: 500\nmean_turn: 0.2 m\ndiameter_over_enamel: 0.56 mm\nenamel: 0.03 mm")
+	over := coil(t, "materials: [copper]\nturns: 500\nmean_turn: 0.2 m\ndiameter_over_enamel: 0.56 mm\nenamel: 0.03 mm\nwinding_area: 2 cm²")
+	near(t, "fill", over, 1e-9, map[string]float64{"fill": 500 * math.Pi / 4 * 0.25 / 200 * 100})
 	bare := coil(t, "materials: [copper]\nlength: 100 m\ndiameter: 0.50 mm")
 	near(t, "over enamel", over, 1e-12, map[string]float64{"resistance_20": *bare.Numbers["resistance_20"].Value, "mass": *bare.Numbers["mass"].Value})
 	twice := coil(t, "materials: [copper]\nlength: 100 m\ndiameter: 0.50 mm\nstrands: 2")
@@ -237,6 +238,7 @@ func TestBadWindings(t *testing.T) {
 		"materials: [copper]":                                                                                   "parameter-missing",
 		"materials: [copper]\nlength: 1 m":                                                                      "parameter-missing",
 		"materials: [copper]\ndiameter: 1 mm":                                                                   "parameter-missing",
+		"materials: [copper]\nlength: 1 m\ndiameter: 1 mm\nwinding_area: 1 cm²":                                 "parameters-contradict",
 		"materials: [copper]\nturns: 20\ndiameter: 1 mm":                                                        "parameter-missing",
 		"materials: [copper]\nturns: 0\nmean_turn: 1 m\ndiameter: 1 mm":                                         "parameter-out-of-bounds",
 		"materials: [copper]\nlength: 1 m\nturns: 3\ndiameter: 1 mm":                                            "parameters-contradict",
