@@ -21,8 +21,10 @@ import (
 	"ohmfolio/generator/material"
 	"ohmfolio/generator/output"
 	"ohmfolio/generator/place"
+	"ohmfolio/generator/sheet"
 	"ohmfolio/generator/site"
 	"ohmfolio/generator/statement"
+	"ohmfolio/generator/study"
 	"ohmfolio/themes"
 )
 
@@ -219,6 +221,7 @@ func Outputs(lib *library.Library, outcomes []examine.Judged, findings []place.F
 		decisions = append(decisions, export.DecisionsOf(j.Document.Source.File, j.Outcome)...)
 	}
 	list := append(append(pages, export.Outputs(lib)...), export.Decisions(decisions))
+	list = append(list, sheet.Outputs(&sheet.Input{Library: lib, Statement: in.Statement, Cautions: study.SheetCautions()})...)
 	return append(list, statementFiles(lib, now)...), nil
 }
 

@@ -2,6 +2,7 @@ package figure
 
 import (
 	"bytes"
+	"io"
 
 	"github.com/golang/freetype/truetype"
 	"github.com/wcharczuk/go-chart/v2"
@@ -12,7 +13,11 @@ var noFont = new(truetype.Font)
 
 // render draws the figure through go-chart onto the SVG renderer.
 func (f *Figure) render(b *bytes.Buffer, l layout) error {
-	svg := &svgRenderer{b: b, f: f, width: l.width, height: l.height}
+	return f.through(l, &svgRenderer{b: b, f: f, width: l.width, height: l.height}, b)
+}
+
+// through lets go-chart frame the drawing and a renderer write it.
+func (f *Figure) through(l layout, r chart.Renderer, w io.Writer) error {
 	hidden := chart.Style{Hidden: true}
 	c := chart.Chart{
 		Width: l.width, Height: l.height, Font: noFont,
@@ -22,7 +27,7 @@ func (f *Figure) render(b *bytes.Buffer, l layout) error {
 		YAxisSecondary: chart.YAxis{Style: hidden, Range: newRange(l.y)},
 		Series:         []chart.Series{layer{l: l, draw: f.draw}},
 	}
-	return c.Render(func(int, int) (chart.Renderer, error) { return svg, nil }, b)
+	return c.Render(func(int, int) (chart.Renderer, error) { return r, nil }, w)
 }
 
 // draw draws from back to front.

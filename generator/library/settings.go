@@ -32,7 +32,7 @@ var settingsShape = &form.Shape{Name: "reference.yaml", Doc: "What the whole ref
 		{Key: "guides", Is: form.List(form.Text), Doc: "Guides in order.", Example: "[how-to-read-a-sheet]"},
 		{Key: "reports", Is: form.List(form.Text), Doc: "Reports in order.", Example: "[conductor-metals]"},
 	}}), Doc: "Reading order."},
-	{Key: "pdf", Is: form.YesNo, Doc: "Whether sheets are written as PDF too (a later version).", Example: "no"},
+	{Key: "pdf", Is: form.YesNo, Doc: "Whether sheets are written as PDF too.", Example: "no"},
 	{Key: "exchange_rates", Is: form.List(form.Mapping(rateShape)), Doc: "Exchange rates with date and source."},
 }}
 

@@ -143,13 +143,10 @@ func gridHTML(g statement.Grid) template.HTML {
 
 func propertiesHTML(rows []statement.PropertyRow) template.HTML {
 	var t tableWriter
-	t.begin("Properties, each with its own source", []string{"Property", "value", "unit", "at", "±", "condition", "class", "source (checked)", "note"}, nil)
-	for _, p := range rows {
-		source := p.SourceID
-		if p.SourceWhere != "" {
-			source += ", " + p.SourceWhere
-		}
-		t.row([]string{p.Name, p.Value, p.Unit, p.At, p.PlusMinus, p.Condition, p.Class, source + " (" + p.Checked + ")", p.Note}, "")
+	heads, cells := statement.PropertyTable(rows)
+	t.begin("Properties, each with its own source", heads, nil)
+	for _, row := range cells {
+		t.row(row, "")
 	}
 	return t.end(nil)
 }

@@ -21,6 +21,35 @@ type DeclarationRow struct {
 	Above                                                                       bool // the greatest content lies above the limit
 }
 
+// Text is the row as one sentence.
+func (e EquivalentRow) Text() string {
+	text := e.Designation
+	if e.System != "" {
+		text += " (" + e.System + ")"
+	}
+	text += ": " + e.Verdict + " for " + e.Use + ". "
+	if e.Date != "" {
+		text += e.Date + ", "
+	}
+	return text + e.By
+}
+
+// Text is the row as one sentence.
+func (d DeclarationRow) Text() string {
+	text := d.Substance + ": " + d.Greatest + ", limit " + d.Limit
+	if d.Above {
+		text += ", above the limit"
+	}
+	text += ", " + d.Basis
+	if d.Exemption != "" {
+		text += ", exemption " + d.Exemption
+	}
+	if d.Expires != "" {
+		text += ", until " + d.Expires
+	}
+	return text + ". " + d.Document + ", " + d.Date
+}
+
 func (b *builder) equivalents() {
 	for _, e := range b.r.Equivalents {
 		row := EquivalentRow{Designation: e.Designation, System: e.System, Verdict: string(e.Verdict), Use: e.Use, Reason: e.Reason,

@@ -69,6 +69,18 @@ type PropertyRow struct {
 	Written                                            string // as the author wrote it
 }
 
+// PropertyTable is the property table as pages and sheets print it.
+func PropertyTable(rows []PropertyRow) (heads []string, cells [][]string) {
+	for _, p := range rows {
+		source := p.SourceID
+		if p.SourceWhere != "" {
+			source += ", " + p.SourceWhere
+		}
+		cells = append(cells, []string{p.Name, p.Value, p.Unit, p.At, p.PlusMinus, p.Condition, p.Class, source + " (" + p.Checked + ")", p.Note})
+	}
+	return []string{"Property", "value", "unit", "at", "±", "condition", "class", "source (checked)", "note"}, cells
+}
+
 // SetRow describes one data set.
 type SetRow struct {
 	Name, Model, Basis, Class, Condition, Reference string
