@@ -23,7 +23,7 @@ import (
 
 // pages is one page of every kind.
 var pages = []string{"index.html", "materials.html", "material/cumn12ni.html", "material/copper-annealed.html", "material/zinc.html", "material/manganin-textbook.html",
-	"material/platinum-thermometer.html", "sheet/cumn12ni-strip-lot.html", "side-by-side.html", "decisions.html", "sources.html", "review.html", "editions.html", "changes.html", "material/busbar-copper-lot.html", "words.html"}
+	"material/platinum-thermometer.html", "sheet/cumn12ni-strip-lot.html", "side-by-side.html", "decisions.html", "sources.html", "review.html", "editions.html", "changes.html", "check.html", "material/busbar-copper-lot.html", "words.html"}
 
 // need skips on a developer's machine and fails in CI when a program is missing.
 func need(t *testing.T, program string) {

@@ -3,14 +3,15 @@ package changes
 // An Entry of a material's history: what one statement says that the one
 // before did not.
 type Entry struct {
-	Statement string // edition, or the words for the present state
-	Revision  int
-	Date      string // of the sign-off
-	Reason    string
-	Author    string
-	Reviewer  string
-	Status    string
-	Change    *Change // nil for the first statement that has the material
+	Statement   string // edition, or the words for the present state
+	Revision    int
+	Fingerprint string
+	Date        string // of the sign-off
+	Reason      string
+	Author      string
+	Reviewer    string
+	Status      string
+	Change      *Change // nil for the first statement that has the material
 }
 
 // History tells, newest first, how the material called id came to what it
@@ -70,7 +71,7 @@ func between(old, now *Material) *Change {
 }
 
 func entry(s *Statement, m *Material) Entry {
-	e := Entry{Statement: s.Edition, Revision: m.Revision, Status: or(m.Status, "draft")}
+	e := Entry{Statement: s.Edition, Revision: m.Revision, Fingerprint: m.Fingerprint, Status: or(m.Status, "draft")}
 	if m.SignOff != nil {
 		e.Date, e.Reason, e.Author, e.Reviewer = m.SignOff.Date, m.SignOff.Reason, m.SignOff.Author, m.SignOff.Reviewer
 	}

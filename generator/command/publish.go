@@ -51,6 +51,7 @@ also frozen under that name in materials/editions, which the keeper commits.`,
 	c.Flags().StringVar(&f.into, "into", "", "folder for the site; public/ under --folder when not given")
 	c.Flags().StringVar(&f.without, "without", "", "leave out: offers, so that the site may go to customers")
 	c.Flags().StringVar(&f.report, "report", "", "file for a report in JSON")
+	c.Flags().StringVar(&f.archive, "archive", "", "file for the whole site as one archive too: site.zip")
 	c.Flags().StringVar(&f.edition, "edition", "", "name of an edition to freeze, such as 2026-06")
 	return c
 }
@@ -80,7 +81,10 @@ type failingJSON struct {
 }
 
 // publishFlags are the words of one publish command.
-type publishFlags struct{ into, report, without, edition string }
+type publishFlags struct {
+	into, report, without, edition string
+	archive                        string // file for the whole site as one archive
+}
 
 func (s *session) runPublish(f publishFlags) error {
 	relaxCollector(0)
@@ -107,7 +111,7 @@ func (s *session) runPublish(f publishFlags) error {
 	if err != nil {
 		return err
 	}
-	result, pages, err := s.write(lib, outcomes, findings, f.into)
+	result, pages, err := s.write(lib, outcomes, findings, f)
 	if err == nil && f.edition != "" {
 		err = s.keepEdition(f.edition, frozen)
 	}
@@ -183,7 +187,7 @@ func writeReport(file string, r reportJSON, start time.Time) error {
 }
 
 // write makes the statements, joins the lists and puts the files in place.
-func (s *session) write(lib *library.Library, outcomes []examine.Judged, findings []place.Finding, into string) (output.Result, int, error) {
+func (s *session) write(lib *library.Library, outcomes []examine.Judged, findings []place.Finding, f publishFlags) (output.Result, int, error) {
 	list, err := Outputs(lib, outcomes, findings, themeOf(s.folder))
 	if err != nil {
 		return output.Result{}, 0, err
@@ -194,7 +198,11 @@ func (s *session) write(lib *library.Library, outcomes []examine.Judged, finding
 			pages++
 		}
 	}
-	result, err := output.Publish(into, list, output.Options{Parallel: runtime.GOMAXPROCS(0), Progress: s.progress()})
+	o := output.Options{Parallel: runtime.GOMAXPROCS(0), Progress: s.progress()}
+	result, err := output.Publish(f.into, list, o)
+	if err == nil && f.archive != "" {
+		err = output.Archive(f.archive, list, o)
+	}
 	return result, pages, err
 }
 

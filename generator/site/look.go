@@ -25,9 +25,9 @@ type look struct {
 }
 
 var templateNames = []string{"frame", "home-page", "materials-page", "material-page", "sheet-page", "report-page", "guide-page",
-	"sources-page", "words-page", "decisions-page", "review-page", "side-by-side-page", "editions-page", "changes-page", "study-part", "study-page"}
+	"sources-page", "words-page", "decisions-page", "review-page", "side-by-side-page", "editions-page", "changes-page", "study-part", "study-page", "check-page"}
 
-func loadLook(theme fs.FS, list []byte) (*look, error) {
+func loadLook(theme fs.FS, list, copies []byte) (*look, error) {
 	l := &look{scripts: map[string]string{}, templates: template.New("").Funcs(helpers)}
 	for _, name := range templateNames {
 		text, err := fs.ReadFile(theme, name+".tmpl")
@@ -48,7 +48,7 @@ func loadLook(theme fs.FS, list []byte) (*look, error) {
 		return nil, err
 	}
 	l.mark = l.add("mark.svg", mark)
-	for _, name := range []string{"tables.js", "evaluate.js", "materials.js", "review.js", "beside.js"} {
+	for _, name := range []string{"tables.js", "evaluate.js", "materials.js", "review.js", "beside.js", "check.js"} {
 		text, err := fs.ReadFile(theme, name)
 		if err != nil {
 			return nil, err
@@ -56,6 +56,7 @@ func loadLook(theme fs.FS, list []byte) (*look, error) {
 		l.scripts[name] = l.add(name, text)
 	}
 	l.scripts["list.js"] = l.add("data/list.js", list)
+	l.scripts["check-data.js"] = l.add("data/check.js", copies)
 	return l, nil
 }
 

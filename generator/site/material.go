@@ -19,6 +19,8 @@ type materialPage struct {
 	BandWords   string
 	Cautions    cautionList
 	History     []historyRow
+	Copy        copyMark // of the sheet
+	PDF         bool
 }
 
 // pair is the statement that a page and its sheet share: computed by the one
@@ -57,6 +59,7 @@ func (s *site) materialPair(r *material.Record) (page, sheet output.Output) {
 		p := s.materialPage(shared.take(compute))
 		p.frame = s.frame("Sheet "+p.S.DocumentNumber+", "+r.Name, "sheet-page", "../", "")
 		p.Cautions = cautionList{"cautions", study.SheetCautions()}
+		p.Copy = s.copyMark(p.S.Record)
 		return p
 	})
 	return page, sheet
@@ -67,7 +70,7 @@ func (s *site) materialPair(r *material.Record) (page, sheet output.Output) {
 func (s *site) materialPage(st *statement.Statement) *materialPage {
 	own := *st
 	own.UsedBy = s.used[st.Record.ID]
-	p := &materialPage{S: &own, StateClass: stateClass(st.Record)}
+	p := &materialPage{PDF: s.in.Library.Settings.PDF, S: &own, StateClass: stateClass(st.Record)}
 	if r := st.Record.ReplacedBy; r != "" {
 		l := s.materialLink(r, "../")
 		p.Replacement = &l

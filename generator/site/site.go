@@ -38,12 +38,12 @@ type Input struct {
 func Outputs(in *Input) ([]output.Output, error) {
 	s := &site{in: in, units: statement.UnitsOf(in.Library)}
 	var err error
-	if s.look, err = loadLook(in.Theme, s.listScript()); err != nil {
+	if s.look, err = loadLook(in.Theme, s.listScript(), s.checkScript()); err != nil {
 		return nil, err
 	}
 	s.used = usedBy(in)
 	list := s.look.outputs()
-	list = append(list, s.home(), s.materials(), s.sideBySide(), s.sources(), s.words(), s.decisions(), s.review(), s.editions(), s.changes())
+	list = append(list, s.home(), s.materials(), s.sideBySide(), s.sources(), s.words(), s.decisions(), s.review(), s.editions(), s.changes(), s.check())
 	for _, r := range in.Library.Materials {
 		page, sheet := s.materialPair(r)
 		list = append(list, page, sheet)
