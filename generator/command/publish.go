@@ -229,8 +229,21 @@ func Outputs(lib *library.Library, outcomes []examine.Judged, findings []place.F
 		decisions = append(decisions, export.DecisionsOf(j.Document.Source.File, j.Outcome)...)
 	}
 	list := append(append(pages, export.Outputs(lib)...), export.Decisions(decisions))
-	list = append(list, sheet.Outputs(&sheet.Input{Library: lib, Statement: in.Statement, Cautions: study.SheetCautions()})...)
+	list = append(list, sheet.Outputs(&sheet.Input{Library: lib, Statement: in.Statement, Cautions: study.SheetCautions(), Studies: onPaper(outcomes)})...)
 	return append(list, statementFiles(lib, now)...), nil
+}
+
+// onPaper are the studies of the reports, counted by document.
+func onPaper(outcomes []examine.Judged) []sheet.Study {
+	var list []sheet.Study
+	count := map[*library.Document]int{}
+	for _, j := range outcomes {
+		if j.Document.Room != "" {
+			list = append(list, sheet.Study{Stem: j.Document.Stem, Index: count[j.Document], Document: j.Document.Page.Title, Outcome: j.Outcome})
+			count[j.Document]++
+		}
+	}
+	return list
 }
 
 // themeOf is the built-in theme, which the folder's own themes/ overrides

@@ -20,6 +20,7 @@ type Input struct {
 	Library   *library.Library
 	Statement func(r *material.Record) *statement.Statement
 	Cautions  []string
+	Studies   []Study
 }
 
 // Path is where the sheet of a material is written; "" for the first paper of
@@ -49,7 +50,7 @@ func Outputs(in *Input) []output.Output {
 			}})
 		}
 	}
-	return list
+	return append(list, studies(in)...)
 }
 
 // Write sets one sheet.
@@ -111,6 +112,7 @@ func (b *sheet) lay() error {
 	for _, c := range b.s.Caveats {
 		b.paragraph(regular, bodySize, c)
 	}
+	b.cautions(b.in.Cautions)
 	if err := b.figures(b.s.RhoFigure, b.s.RatioFigure); err != nil {
 		return err
 	}
@@ -217,18 +219,18 @@ func (b *sheet) words() {
 		b.paragraph(regular, bodySize, text)
 	}
 	b.paragraph(regular, bodySize, "To check this copy: "+copycheck.Characters(r.ID, r.Revision, r.Fingerprint)+" on the check page of "+b.in.Library.Settings.Title+".")
-	b.cautions()
 }
 
-// cautions stand together on one page.
-func (b *sheet) cautions() {
+// cautions stand together, on the page of the first numbers.
+func (d *doc) cautions(list []string) {
 	room := headSize * lead * 2
-	for _, c := range b.in.Cautions {
-		room += bodySize * (lead*float64(len(b.t.wrap(regular, bodySize, b.t.plain(c), b.paper.width-2*margin))) + 0.35)
+	for _, c := range list {
+		room += bodySize * (lead*float64(len(d.t.wrap(regular, bodySize, d.t.plain(c), d.paper.width-2*margin))) + 0.35)
 	}
-	b.need(room)
-	b.heading("Cautions")
-	for _, c := range b.in.Cautions {
-		b.paragraph(regular, bodySize, c)
+	d.need(room)
+	d.heading("Cautions")
+	for _, c := range list {
+		d.paragraph(regular, bodySize, c)
 	}
+	d.y += 4
 }

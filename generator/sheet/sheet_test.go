@@ -115,7 +115,7 @@ func TestReadingOrder(t *testing.T) {
 	in := demo(t)
 	text := run(t, "pdftotext", "poppler-utils", "-layout", onDisk(t, written(t, in, "cumn12ni", "A4")), "-")
 	last := -1
-	for _, part := range []string{"Copper-manganese-nickel resistance alloy", "Resistivity at 25 °C", "µΩ·cm", "β about 25 °C", "ppm/K²", "Values at round steps", "Properties", "thermal EMF", "Not stated", "Sources", "Author:", "Cautions"} {
+	for _, part := range []string{"Copper-manganese-nickel resistance alloy", "Resistivity at 25 °C", "µΩ·cm", "β about 25 °C", "ppm/K²", "Cautions", "not an approval", "Values at round steps", "Properties", "thermal EMF", "Not stated", "Sources", "Author:"} {
 		at := strings.Index(text, part)
 		if at < last {
 			t.Errorf("%q stands before what comes before it, or is missing", part)
@@ -229,5 +229,40 @@ func BenchmarkSheet(b *testing.B) {
 		if err := Write(&w, in, s, papers["A4"]); err != nil {
 			b.Fatal(err)
 		}
+	}
+}
+
+// TestStudySheets sets every study of the demo; the cautions stand on the page
+// of the answer, and every table of the study is there.
+func TestStudySheets(t *testing.T) {
+	in := demo(t)
+	n := 0
+	for _, d := range in.Library.Documents {
+		for i, block := range d.Page.Studies {
+			o, findings := study.Run(in.Library, block)
+			if o == nil {
+				t.Fatal(findings)
+			}
+			n++
+			var b bytes.Buffer
+			if err := WriteStudy(&b, in, Study{d.Stem, i, d.Page.Title, o}, papers["A4"]); err != nil {
+				t.Fatal(err)
+			}
+			file := onDisk(t, b.Bytes())
+			run(t, "qpdf", "qpdf", "--check", file)
+			text := run(t, "pdftotext", "poppler-utils", "-layout", file, "-")
+			first, _, _ := strings.Cut(text, "\f")
+			for _, part := range []string{"Given", "Answer", "Cautions", "not an approval", "page 1 of"} {
+				if !strings.Contains(first, part) {
+					t.Errorf("%s, %q: %q is not on the first page", d.Stem, o.Title, part)
+				}
+			}
+			if text = strings.ReplaceAll(text, d.Page.Title, ""); strings.Contains(text, "?") {
+				t.Errorf("%s, %q: a sign that the fonts do not have: %s", d.Stem, o.Title, regexp.MustCompile(`.{0,30}\?.{0,30}`).FindString(text))
+			}
+		}
+	}
+	if n < 8 {
+		t.Errorf("only %d studies", n)
 	}
 }

@@ -78,7 +78,9 @@ func (w *writer) strip(d *doc, id identity, n, of int) {
 	w.text(regular, stripSize, right-w.t.width(regular, stripSize, text), top, 0, text)
 	w.line(margin, top+5, right, top+5, 0.7, 0)
 	w.line(margin, foot-11, right, foot-11, 0.5, 0)
-	w.text(regular, stripSize, margin, foot, 0, w.t.plain(id.foot))
+	for i, line := range w.t.wrap(regular, stripSize, w.t.plain(id.foot), right-margin-70) {
+		w.text(regular, stripSize, margin, foot+float64(i)*stripSize*1.2, 0, line) // the margin has room for more lines
+	}
 	page := "page " + strconv.Itoa(n) + " of " + strconv.Itoa(of)
 	w.text(regular, stripSize, right-w.t.width(regular, stripSize, page), foot, 0, page)
 }

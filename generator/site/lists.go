@@ -116,7 +116,7 @@ func (s *site) decisionRows() []decisionRow {
 }
 
 func (s *site) decisionRow(d *library.Document, o *study.Outcome, m study.MaterialOutcome, r study.Requirement) decisionRow {
-	row := decisionRow{Title: o.Title, Path: pagePath(d), Size: m.Size, Material: m.Material, Name: s.short(m.Material), Requirement: requirementText(r),
+	row := decisionRow{Title: o.Title, Path: pagePath(d), Size: m.Size, Material: m.Material, Name: s.short(m.Material), Requirement: r.Text(),
 		Verdict: r.Verdict.Shown(), Margin: "cannot be told", Binding: o.Binding, margin: -1e9}
 	if r.Margin != nil {
 		row.Margin, row.margin = quantity.Fixed(*r.Margin*100, 1)+quantity.NarrowSpace+"%", *r.Margin
