@@ -18,6 +18,9 @@ func (d *doc) figures(list ...*figure.Figure) error {
 		return nil
 	}
 	width := (d.paper.width - 2*margin - 14) / 2
+	if w, _ := kept[0].Size(); len(kept) == 1 && w > 6000 {
+		width = (d.paper.width - 2*margin) * 0.68 // drawn to stand alone
+	}
 	tallest := 0.0
 	for _, f := range kept {
 		w, h := f.Size()
