@@ -220,6 +220,7 @@ func Outputs(lib *library.Library, outcomes []examine.Judged, findings []place.F
 		a, err := statement.AskInWords(lib, r, question, written)
 		return a.Text, a.Note, err == nil
 	}
+	in.Files = filesOf
 	pages, err := site.Outputs(in)
 	if err != nil {
 		return nil, err
@@ -231,6 +232,20 @@ func Outputs(lib *library.Library, outcomes []examine.Judged, findings []place.F
 	list := append(append(pages, export.Outputs(lib)...), export.Decisions(decisions))
 	list = append(list, sheet.Outputs(&sheet.Input{Library: lib, Statement: in.Statement, Cautions: study.SheetCautions()})...)
 	return append(list, statementFiles(lib, now)...), nil
+}
+
+// filesOf tells the pages of the files for other programs; one reason that
+// there is none is said once.
+func filesOf(r *material.Record) []site.File {
+	var list []site.File
+	for _, f := range export.Files(r) {
+		if n := len(list); n > 0 && f.Refused != "" && f.Refused == list[n-1].Refused {
+			list[n-1].For += ", " + f.For
+			continue
+		}
+		list = append(list, site.File{For: f.For, Path: f.Path, Refused: f.Refused})
+	}
+	return list
 }
 
 // themeOf is the built-in theme, which the folder's own themes/ overrides
