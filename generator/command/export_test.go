@@ -104,7 +104,7 @@ func TestLinksToData(t *testing.T) {
 			}
 		}
 	}
-	if n < 100 || !strings.Contains(texts["material/zinc.html"], "none, the record tells no resistance over temperature") {
+	if n < 100 || !strings.Contains(texts["material/zinc.html"], "For other programs: none, the record tells no resistance over temperature") {
 		t.Errorf("%d files; zinc has no curve and its page must say why there is none", n)
 	}
 }

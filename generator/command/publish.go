@@ -245,6 +245,9 @@ func filesOf(r *material.Record) []site.File {
 		}
 		list = append(list, site.File{For: f.For, Path: f.Path, Refused: f.Refused})
 	}
+	if len(list) == 1 {
+		list[0].For = "" // none at all
+	}
 	return list
 }
 

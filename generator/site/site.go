@@ -34,7 +34,8 @@ type Input struct {
 	History  func(materialID string) []changes.Entry
 }
 
-// A File is a file of one material for other programs, or why there is none.
+// A File is a file of one material for other programs, or why there is none;
+// For is empty where there is none at all.
 type File struct{ For, Path, Refused string }
 
 // Outputs lists every page, style and script. The error names the template
