@@ -113,11 +113,12 @@ const offers = "material,supplier,form,size,price,currency,per,quantity,date,val
 	"copper,Nobody and Daughters,wire,1 mm,97531.24,EUR,kg,25 kg,2026-09-21,2026-12-31,included,3.1,,a dear one\n" +
 	"copper,Nobody and Daughters,wire,2 mm,86420.13,,kg,25 kg,,,included,3.1,,neither dated nor in a currency\n"
 
-// TestWithoutOffers: with them the supplier stands on the site; without them
+// TestWithoutOffers: with them price and supplier stand on the site; without them
 // neither a price nor a supplier nor a finding about them is left in any file,
 // and offers that cannot be read stop nobody.
 func TestWithoutOffers(t *testing.T) {
-	files := map[string]string{"materials/sources.yaml": sources, "materials/copper.yaml": copper, "materials/offers.csv": offers}
+	files := map[string]string{"materials/sources.yaml": sources, "materials/copper.yaml": copper, "materials/offers.csv": offers,
+		"content/reports/cost.md": "# Cost\n\n```study: cost\nmaterials: [copper]\nbaseline: copper\nheld: length\n```\n"}
 	dir := reference(t, files)
 	count := func(texts map[string]string) (n int) {
 		for _, text := range texts {
@@ -127,11 +128,20 @@ func TestWithoutOffers(t *testing.T) {
 		}
 		return n
 	}
-	if n := count(writtenSite(t, "publish", "--folder", dir)); n == 0 {
-		t.Error("the site never shows an offer: this test proves nothing")
+	if with := writtenSite(t, "publish", "--folder", dir); !strings.Contains(with["report/cost.html"], "97531") || count(with) < 4 {
+		t.Error("the site does not show its offers: this test proves nothing")
 	}
 	if n := count(writtenSite(t, "publish", "--folder", dir, "--without", "offers")); n != 0 {
 		t.Errorf("%d traces of offers are left", n)
+	}
+	for want, args := range map[string][]string{"with": {"publish", "--folder", "../.."}, "without": {"publish", "--folder", "../..", "--without", "offers"}} {
+		n := 0
+		for _, text := range writtenSite(t, args...) {
+			n += strings.Count(text, "EUR") + strings.Count(text, "USD")
+		}
+		if (want == "with") != (n > 0) {
+			t.Errorf("the demo %s offers has %d prices or rates", want, n)
+		}
 	}
 	files["materials/offers.csv"] = strings.Replace(offers, "material,", "materials;", 1)
 	dir = reference(t, files)

@@ -23,7 +23,7 @@ func Simulator(w *bytes.Buffer, lib *library.Library, r *material.Record, o Orde
 	name := word(r.ID)
 	w.WriteString("* Resistance over temperature, for circuit simulators\n")
 	writeComments(w, "* ", identity(lib, r, t.set), plain)
-	fmt.Fprintf(w, "* quantity: resistance of a fixed body, growth of the body included\n")
+	fmt.Fprintf(w, "* quantity: resistance of a fixed body; see the notes, if any\n")
 	fmt.Fprintf(w, "* nominal temperature: %s, written as tnom, whatever the simulator takes for its own\n", degrees(t.nominal))
 	fmt.Fprintf(w, "* base value: the ohms at %s; they are %s times those at %s\n", degrees(t.nominal), number(t.scale), degrees(t.set.RatioReference))
 	w.WriteString("* letters after a number: m and M both mean thousandths here, meg means millions\n")
