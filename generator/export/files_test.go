@@ -5,6 +5,7 @@ import (
 	"encoding/csv"
 	"encoding/json"
 	"regexp"
+	"strconv"
 	"strings"
 	"testing"
 
@@ -134,6 +135,34 @@ func TestHostileTexts(t *testing.T) {
 			}
 		}
 	}
+}
+
+// FuzzTexts: whatever a text holds, it is one line of printable ASCII, cannot
+// end a comment or a string of C, and is no formula.
+func FuzzTexts(f *testing.F) {
+	f.Add(hostile)
+	f.Add("*/*/**//*")
+	f.Add(" =1")
+	f.Add("\u200b=1")
+	f.Add("???/\\")
+	f.Fuzz(func(t *testing.T, s string) {
+		for _, out := range []string{plain(s), inComment(s), inQuotes(s), cell(s)} {
+			for i := range len(out) {
+				if out[i] < 0x20 || out[i] > 0x7e {
+					t.Fatalf("%q becomes %q", s, out)
+				}
+			}
+		}
+		if c := inComment(s); strings.Contains(c, "*/") || strings.Contains(c, "/*") {
+			t.Errorf("a comment of %q", c)
+		}
+		if c := cell(s); c != "" && strings.ContainsAny(c[:1], "=+-@|% ") {
+			t.Errorf("a cell of %q", c)
+		}
+		if q, err := strconv.Unquote(strings.ReplaceAll(inQuotes(s), `\?`, "?")); err != nil || q != plain(s) || strings.Contains(inQuotes(s), "??") {
+			t.Errorf("quoted %s: %v", inQuotes(s), err)
+		}
+	})
 }
 
 // TestHostileTextsInPrograms: simulator and compiler take the hostile files,

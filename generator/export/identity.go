@@ -44,10 +44,13 @@ func identity(lib *library.Library, r *material.Record, set *material.DataSet) [
 
 // toleranceText: these files carry the nominal curve alone.
 func toleranceText(set *material.DataSet) string {
-	if set.Ratio != nil && set.Ratio.Limits != nil {
-		return "nominal curve only; limits stand on the material's sheet"
+	switch {
+	case set.Ratio != nil && set.Ratio.Limits != nil:
+		return "nominal curve only; its limits stand on the material's sheet"
+	case set.Ratio != nil && set.Ratio.Uncertainty != nil:
+		return "nominal curve only; its uncertainty stands on the material's sheet"
 	}
-	return "nominal curve only; limits of the coefficients are not stated"
+	return "nominal curve only; neither limits nor an uncertainty of the curve are stated"
 }
 
 func stateText(r *material.Record) string {
@@ -64,7 +67,7 @@ func stateText(r *material.Record) string {
 		}
 	}
 	if r.Invented {
-		text += "; invented data of an example"
+		text += "; invented data of an example, not for use"
 	}
 	return text
 }

@@ -54,12 +54,11 @@ func inComment(s string) string {
 	return strings.ReplaceAll(strings.ReplaceAll(plain(s), "*/", "* /"), "/*", "/ *")
 }
 
-// inQuotes is plain text between quotes of C: quotes and backslashes escaped,
-// and no pair of question marks, which old compilers read as something else.
-func inQuotes(s string) string {
-	s = strings.ReplaceAll(strings.ReplaceAll(plain(s), `\`, `\\`), `"`, `\"`)
-	return `"` + strings.ReplaceAll(s, "??", `?\?`) + `"`
-}
+// inQuotes is plain text between quotes of C. Question marks are escaped, too:
+// two of them and a third sign are something else to old compilers.
+func inQuotes(s string) string { return `"` + quoting.Replace(plain(s)) + `"` }
+
+var quoting = strings.NewReplacer(`\`, `\\`, `"`, `\"`, "?", `\?`)
 
 // cell is a text as a cell of a CSV file. Spreadsheets run a cell that begins
 // with one of these signs as a formula; an apostrophe in front makes it text

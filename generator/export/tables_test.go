@@ -4,6 +4,7 @@ import (
 	"bytes"
 	"encoding/csv"
 	"math"
+	"math/rand/v2"
 	"os"
 	"os/exec"
 	"path/filepath"
@@ -137,6 +138,54 @@ func sameTable(t *testing.T, r *material.Record, text, table string) {
 			t.Fatalf("%s: row %v", r.ID, row)
 		}
 	}
+}
+
+// TestLookupOfAnyCurve: tables through random rows, straight or curved, with a
+// step at one knot, are chosen and within their bound; seeds are fixed.
+func TestLookupOfAnyCurve(t *testing.T) {
+	for seed := range uint64(300) {
+		random := rand.New(rand.NewPCG(seed, 4))
+		l, err := randomTask(t, random).lookupOf()
+		if err != nil || len(l.counts) > mostRows || !(l.bound < 1) {
+			t.Fatalf("seed %d: %v, %+v", seed, err, l)
+		}
+		last := l.first + int64(len(l.counts)-1)*l.stepM
+		for range 3000 {
+			m := l.first + random.Int64N(last-l.first)
+			i := (m - l.first) / l.stepM
+			line := float64(l.counts[i]) + float64(l.counts[i+1]-l.counts[i])*float64(m-l.first-i*l.stepM)/float64(l.stepM)
+			v, _ := l.ratio.At(273.15 + float64(m)/1000)
+			if off := math.Abs(line - (v-1)/(l.ppm*1e-6)); off > l.bound+1e-6 {
+				t.Fatalf("seed %d at %d m°C: off by %g counts, proven %g", seed, m, off, l.bound)
+			}
+		}
+		if left := l.uncovered(); left < 0 || left >= l.stepM {
+			t.Errorf("seed %d: %d thousandths are left over, step %d", seed, left, l.stepM)
+		}
+	}
+}
+
+// randomTask has 2 to 12 rows of R/R(nominal) from 0.05 to 5, and a step of
+// 500 ppm at some knot of half of the seeds.
+func randomTask(t *testing.T, random *rand.Rand) task {
+	t.Helper()
+	n := 2 + random.IntN(11)
+	kelvin, ratio := make([]float64, n), make([]float64, n)
+	at := 4 + 100*random.Float64()
+	for i := range n {
+		kelvin[i], ratio[i] = at, 0.05+5*random.Float64()*random.Float64()
+		at += 0.1 + 150*random.Float64()*random.Float64()
+	}
+	c, err := curve.Table(kelvin, ratio, random.IntN(2) == 0)
+	if err != nil {
+		t.Fatal(err)
+	}
+	if k := random.IntN(2 * len(c.Segments)); k < len(c.Segments) {
+		for i := k; i < len(c.Segments); i++ {
+			c.Segments[i].C[0] += 0.0005
+		}
+	}
+	return task{ratio: c, nominal: kelvin[0], lo: kelvin[0], hi: kelvin[n-1]}
 }
 
 // TestThermometerTable: IEC 60751 tells R(100 °C)/R(0 °C) = 1.3851 and
