@@ -108,7 +108,7 @@ func chordBound(c curve.Curve, a, b float64, begin int) (bound float64, at int) 
 			bend = math.Max(bend, math.Max(math.Abs(second(s, from)), math.Abs(second(s, to))))
 		}
 		if i == len(c.Segments)-1 || s.To > b+onKnot {
-			return bound + float64(h*h)/8*bend, at
+			return bound + float64(float64(h*h)/8*bend), at
 		}
 		next, x := &c.Segments[i+1], s.To
 		if inside := (x - a) * (b - x); inside > 0 {
