@@ -7,75 +7,63 @@ import (
 	"github.com/spf13/cobra"
 
 	"ohmfolio/generator/export"
+	"ohmfolio/generator/library"
 	"ohmfolio/generator/material"
 	"ohmfolio/generator/quantity"
 )
 
+// exportFlags are the words of one export command.
+type exportFlags struct{ as, nominal, window, step, data string }
+
+// exportWriters are the words of --as with what they write.
+var exportWriters = map[string]func(*bytes.Buffer, *library.Library, *material.Record, export.Order) error{
+	"simulator": export.Simulator, "header": export.LookupHeader, "lookup": export.LookupCSV, "elements": export.Elements,
+}
+
 func (s *session) export() *cobra.Command {
-	var as, nominal, window string
+	var f exportFlags
 	c := &cobra.Command{
-		Use: "export MATERIAL --as simulator", Short: "Print one material for another program",
-		Long: `Prints the adopted curve of one material for another program, with its
-identity: a line for circuit simulators about a nominal temperature (TNOM is
-always written), a look-up table for firmware, or a table for finite elements.
-A nominal temperature outside the valid range is refused.`,
-		Example: `  ohmfolio export cumn12ni --as simulator --nominal "25 °C" --window "15 °C to 60 °C"`,
+		Use: "export MATERIAL --as FORM", Short: "Write a curve for a circuit simulator, firmware or a finite-element program",
+		Long: `Writes one material for another program, with its identity and its state:
+
+  simulator   a resistor model with TC1, TC2 and TNOM, about 27 °C unless
+              --nominal says otherwise; exact where the curve is a parabola,
+              otherwise a fit over the window, with its largest error, and the
+              curve itself as an expression
+  header      a table of whole numbers as a header of C; step and count are
+              chosen so that straight lines stay within one count of the curve
+  lookup      the same table as CSV
+  elements    resistivity over temperature, ascending, in SI units, as CSV`,
+		Example: `  ohmfolio export cumn12ni --as simulator --nominal "25 °C"`,
 		Args:    exactArgs(1, "a material: cumn12ni"),
-		RunE:    func(_ *cobra.Command, args []string) error { return s.runExport(args[0], as, nominal, window) },
+		RunE:    func(_ *cobra.Command, args []string) error { return s.runExport(args[0], f) },
 	}
-	c.Flags().StringVar(&as, "as", "", "simulator, header, lookup or elements")
-	c.Flags().StringVar(&nominal, "nominal", "27 °C", "nominal temperature of the simulator line")
-	c.Flags().StringVar(&window, "window", "", "window over which a quadratic is fitted; the valid range when not given")
+	c.Flags().StringVar(&f.as, "as", "", "simulator, header, lookup or elements")
+	c.Flags().StringVar(&f.nominal, "nominal", "", "temperature of the base value; 27 °C for simulators, otherwise the data set's own reference temperature")
+	c.Flags().StringVar(&f.window, "window", "", `part of the valid range: "-40 °C to 85 °C"; all of it when not given`)
+	c.Flags().StringVar(&f.step, "step", "", `step between rows of a table: "5 K"; chosen when not given`)
+	c.Flags().StringVar(&f.data, "data", "", "data set; the adopted one when not given")
 	return c
 }
 
-func (s *session) runExport(id, as, nominal, window string) error {
-	if err := oneOf("--as", as, "simulator", "header", "lookup", "elements"); err != nil {
+func (s *session) runExport(id string, f exportFlags) error {
+	if err := oneOf("--as", f.as, "simulator", "header", "lookup", "elements"); err != nil {
 		return err
 	}
-	t, p := quantity.Parse(quantity.Temperature, nominal)
-	if p != nil {
-		return fmt.Errorf("--nominal %q: %s", nominal, p.Error())
-	}
-	var lo, hi quantity.Quantity
-	if window != "" {
-		if lo, hi, p = quantity.ParseRange(quantity.Temperature, window); p != nil {
-			return fmt.Errorf("--window %q: %s", window, p.Error())
-		}
+	order, err := f.order()
+	if err != nil {
+		return err
 	}
 	lib, r, err := s.loadOne(id)
 	if err != nil {
 		return err
 	}
-	var text bytes.Buffer
-	switch as {
-	case "simulator":
-		l, err := export.Simulator(r, t.Value, lo.Value, hi.Value)
-		if err != nil {
-			return requestError{err}
-		}
-		export.WriteSimulator(&text, lib, r, l)
-	case "elements":
-		temperatures, err := export.Elements(r)
-		if err != nil {
-			return requestError{err}
-		}
-		if err := export.WriteElements(&text, r, temperatures); err != nil {
-			return err
-		}
-	default:
-		l, err := export.NewLookup(r)
-		if err != nil {
-			return requestError{err}
-		}
-		if as == "header" {
-			export.WriteHeader(&text, lib, r, l)
-		} else if err := export.WriteLookup(&text, r, l); err != nil {
-			return err
-		}
+	var b bytes.Buffer
+	if err := exportWriters[f.as](&b, lib, r, order); err != nil {
+		return requestError{fmt.Errorf("%s: %w", r.ID, err)}
 	}
 	s.warnStatus(r)
-	_, err = s.out.Write(text.Bytes())
+	_, err = s.out.Write(b.Bytes())
 	return err
 }
 
@@ -84,4 +72,34 @@ func (s *session) warnStatus(r *material.Record) {
 	if r.Status != material.Released {
 		fmt.Fprintf(s.err, "warning: %s is %s, not for use\n", r.ID, r.Status)
 	}
+}
+
+// order reads the flags.
+func (f exportFlags) order() (export.Order, error) {
+	o := export.Order{Set: f.data}
+	var err error
+	if o.Nominal, err = optionalTemperature("--nominal", f.nominal); err != nil {
+		return o, err
+	}
+	if f.window != "" {
+		lo, hi, err := windowOf(f.window)
+		if err != nil {
+			return o, err
+		}
+		o.Window = &material.Window{Lo: lo, Hi: hi}
+	}
+	if f.step == "" {
+		return o, nil
+	}
+	if f.as == "simulator" {
+		return o, fmt.Errorf("--step is for tables; a simulator's model has no rows")
+	}
+	q, p := quantity.Parse(quantity.TemperatureDifference, f.step)
+	if p != nil {
+		return o, fmt.Errorf("--step %q: %s", f.step, p.Error())
+	}
+	if o.Step = q.Value; !q.HasValue() || !(o.Step > 0) {
+		return o, fmt.Errorf(`--step takes a temperature difference above zero such as "5 K", not %q`, f.step)
+	}
+	return o, nil
 }

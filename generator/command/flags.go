@@ -53,3 +53,15 @@ func optionalTemperature(flag, text string) (*float64, error) {
 	t, err := temperature(flag, text)
 	return &t, err
 }
+
+// windowOf reads a rising pair of temperatures in kelvin.
+func windowOf(text string) (lo, hi float64, err error) {
+	from, to, p := quantity.ParseRange(quantity.Temperature, text)
+	switch {
+	case p != nil:
+		return 0, 0, fmt.Errorf("--window %q: %s", text, p.Error())
+	case from.Value >= to.Value:
+		return 0, 0, fmt.Errorf("--window %q does not rise; write the lower temperature first", text)
+	}
+	return from.Value, to.Value, nil
+}

@@ -220,6 +220,7 @@ func Outputs(lib *library.Library, outcomes []examine.Judged, findings []place.F
 		a, err := statement.AskInWords(lib, r, question, written)
 		return a.Text, a.Note, err == nil
 	}
+	in.Files = filesOf
 	pages, err := site.Outputs(in)
 	if err != nil {
 		return nil, err
@@ -242,6 +243,23 @@ func onPaper(outcomes []examine.Judged) []sheet.Study {
 			list = append(list, sheet.Study{Stem: j.Document.Stem, Index: count[j.Document], Document: j.Document.Page.Title, Outcome: j.Outcome})
 			count[j.Document]++
 		}
+	}
+	return list
+}
+
+// filesOf tells the pages of the files for other programs; one reason that
+// there is none is said once.
+func filesOf(r *material.Record) []site.File {
+	var list []site.File
+	for _, f := range export.Files(r) {
+		if n := len(list); n > 0 && f.Refused != "" && f.Refused == list[n-1].Refused {
+			list[n-1].For += ", " + f.For
+			continue
+		}
+		list = append(list, site.File{For: f.For, Path: f.Path, Refused: f.Refused})
+	}
+	if len(list) == 1 {
+		list[0].For = "" // none at all
 	}
 	return list
 }

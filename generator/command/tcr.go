@@ -37,12 +37,9 @@ func (s *session) runTCR(id, window, reference, data, format string) error {
 	if window == "" {
 		return fmt.Errorf(`tcr needs --window with two temperatures: --window "-40 °C to 85 °C"`)
 	}
-	lo, hi, p := quantity.ParseRange(quantity.Temperature, window)
-	if p != nil {
-		return fmt.Errorf("--window %q: %s", window, p.Error())
-	}
-	if lo.Value >= hi.Value {
-		return fmt.Errorf("--window %q does not rise; write the lower temperature first", window)
+	lo, hi, err := windowOf(window)
+	if err != nil {
+		return err
 	}
 	ref, err := optionalTemperature("--reference", reference)
 	if err != nil {
@@ -52,7 +49,7 @@ func (s *session) runTCR(id, window, reference, data, format string) error {
 	if err != nil {
 		return err
 	}
-	a, err := statement.TCR(lib, r, data, lo.Value, hi.Value, ref)
+	a, err := statement.TCR(lib, r, data, lo, hi, ref)
 	if err != nil {
 		return requestError{fmt.Errorf("%s: %w", r.ID, err)}
 	}

@@ -51,7 +51,7 @@ func csvTemperatures(set *material.DataSet) []float64 {
 }
 
 func csvRow(r *material.Record, set *material.DataSet, t float64) []string {
-	row := []string{r.ID, set.Name, strconv.Itoa(r.Revision), r.Fingerprint, string(r.Status), number(t - quantity.ZeroCelsius)}
+	row := []string{r.ID, cell(set.Name), strconv.Itoa(r.Revision), r.Fingerprint, string(r.Status), number(t - quantity.ZeroCelsius)}
 	row = append(row, told(set.Rho, t), told(set.Ratio, t))
 	if set.Ratio == nil {
 		row = append(row, "")
@@ -96,8 +96,9 @@ type csvwTables struct {
 }
 
 type csvwTable struct {
-	URL   string `json:"url"`
-	Title string `json:"dc:title"`
+	URL         string `json:"url"`
+	Title       string `json:"dc:title"`
+	TableSchema string `json:"tableSchema,omitempty"` // where it is another than that of the group
 }
 
 type csvwSchema struct {
@@ -116,6 +117,7 @@ func describeCSV(lib *library.Library) csvwTables {
 	t := csvwTables{Context: "http://www.w3.org/ns/csvw", Tables: []csvwTable{}}
 	for _, r := range lib.Materials {
 		t.Tables = append(t.Tables, csvwTable{URL: r.ID + ".csv", Title: r.Name})
+		t.Tables = append(t.Tables, describePrograms(r)...)
 	}
 	column := func(name, datatype, unit, description string) {
 		t.TableSchema.Columns = append(t.TableSchema.Columns, csvwColumn{name, name, datatype, description, unit})

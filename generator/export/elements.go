@@ -2,89 +2,153 @@ package export
 
 import (
 	"bytes"
-	"encoding/csv"
 	"fmt"
 	"math"
 	"sort"
-	"strconv"
 
 	"ohmfolio/generator/curve"
+	"ohmfolio/generator/library"
 	"ohmfolio/generator/material"
+	"ohmfolio/generator/quantity"
 )
 
-// elementError is how far linear interpolation between the rows of an element
-// table may be off, relative.
-const elementError = 1e-5
+// finest is the place in sizes of how far the line between two rows may lie from the
+// curve, relative to the value, where no step was asked for: 10 ppm, more
+// where that would take more than mostRows.
+const finest = 3
 
-// Elements are the rows of a table for a finite-element program: ascending
-// kelvin, SI units, close enough for linear interpolation within 10 ppm.
-func Elements(r *material.Record) ([]float64, error) {
-	set := r.Adopted
-	if set == nil || !set.Rho.HasNominal() || set.Valid.Hi <= set.Valid.Lo {
-		return nil, fmt.Errorf("%s tells no nominal curve of ρ", r.ID)
-	}
-	var list []float64
-	for _, g := range set.Rho.Nominal.Segments {
-		lo, hi := math.Max(g.From, set.Valid.Lo), math.Min(g.To, set.Valid.Hi)
-		if hi <= lo {
-			continue
-		}
-		n := cells(g, lo, hi)
-		for i := range n {
-			list = append(list, lo+float64((hi-lo)*float64(i)/float64(n)))
-		}
-		list = append(list, hi)
-	}
-	sort.Float64s(list)
-	kept := list[:0]
-	for i, t := range list {
-		if i == 0 || t > kept[len(kept)-1]+1e-9 {
-			kept = append(kept, t)
-		}
-	}
-	return kept, nil
-}
-
-// cells is how many even parts of [lo, hi] keep |f″|h²/8 under the error.
-func cells(g curve.Segment, lo, hi float64) int {
-	bend := math.Max(math.Abs(2*g.C[2]+6*g.C[3]*(lo-g.Centre)), math.Abs(2*g.C[2]+6*g.C[3]*(hi-g.Centre)))
-	least := math.Inf(1)
-	for _, t := range []float64{lo, hi} {
-		x := t - g.Centre
-		least = math.Min(least, math.Abs(g.C[0]+x*(g.C[1]+x*(g.C[2]+x*g.C[3]))))
-	}
-	if !(bend > 0) || !(least > 0) {
-		return 1
-	}
-	return min(1000, max(1, int(math.Ceil((hi-lo)/math.Sqrt(8*elementError*least/bend)))))
-}
-
-var elementHeads = []string{"material", "data_set", "condition", "class", "revision", "fingerprint", "status", "temperature_K", "resistivity_ohm_m", "conductivity_S_per_m",
-	"reference_temperature_C", "valid_from_K", "valid_to_K", "expansion", "between_rows", "outside"}
-
-// WriteElements writes the table as CSV, with its identity in every row.
-func WriteElements(w *bytes.Buffer, r *material.Record, temperatures []float64) error {
-	set := r.Adopted
-	c := csv.NewWriter(w)
-	c.UseCRLF = true
-	if err := c.Write(elementHeads); err != nil {
+// Elements writes resistivity over temperature for finite-element programs,
+// ascending, from limit to limit of the data. A mesh that grows with
+// temperature takes the volume resistivity, one that does not takes the
+// resistivity on fixed dimensions, in which the growth is contained. There is
+// no column of conductivity: straight lines between its values would be another
+// curve, and two rows are enough for a metal whose resistivity is a straight line.
+func Elements(w *bytes.Buffer, _ *library.Library, r *material.Record, o Order) error {
+	t, err := o.take(r, ownReference)
+	if err != nil {
 		return err
 	}
-	expansion := "corrected for expansion: use the true dimensions at each temperature"
-	if _, known := r.Expansion(); set.Basis != material.Resistivity && !known || set.Basis == "" {
-		expansion = "not corrected for expansion: use the dimensions of the reference temperature"
+	if err := t.needsResistivity(); err != nil {
+		return err
 	}
-	for _, t := range temperatures {
-		rho, ok := set.Rho.Nominal.At(t)
-		if !ok {
-			continue
-		}
-		err := c.Write([]string{r.ID, set.Name, safeCell(set.Condition), string(set.Class), strconv.Itoa(r.Revision), r.Fingerprint, string(r.Status), number(t), number(rho), number(1 / rho),
-			celsius(set.RatioReference), number(set.Valid.Lo), number(set.Valid.Hi), expansion, "linear, within 10 ppm", outsideWords})
-		if err != nil {
-			return err
+	if n := (t.hi - t.lo) / t.step; t.step > 0 && n >= mostOrderedRows {
+		return fmt.Errorf("the step gives more than %d rows", mostOrderedRows)
+	}
+	at, _ := t.set.Rho.Nominal.At(t.nominal)
+	fixed := t.ratio.Scale(at)
+	rows, worst := t.elementRows(fixed)
+	c := newCSV(w, tableSchemas[1].columns, append([]string{number(t.nominal - quantity.ZeroCelsius), "SI", t.expansionWords(), ppmUp(worst), noValue, noValue}, t.identityCells()...))
+	for _, k := range rows {
+		rho, _ := t.set.Rho.Nominal.At(k)
+		f, _ := fixed.At(k)
+		c.row(number(k-quantity.ZeroCelsius), number(k), number(rho), number(f))
+	}
+	return nil
+}
+
+// elementRows are the temperatures of the rows and the largest proven distance
+// of the line between two of them from either curve, relative to the value.
+func (t *task) elementRows(fixed curve.Curve) (rows []float64, worst float64) {
+	rho := t.set.Rho.Nominal
+	if t.step > 0 {
+		rows = t.evenRows()
+	} else {
+		rows = t.chosenRows(rho, fixed)
+	}
+	i, j := 0, 0
+	for k := 1; k < len(rows); k++ {
+		var a, b float64
+		a, i = chordBound(rho, rows[k-1], rows[k], i)
+		b, j = chordBound(fixed, rows[k-1], rows[k], j)
+		worst = math.Max(worst, math.Max(a/least(rho, rows[k-1], rows[k]), b/least(fixed, rows[k-1], rows[k])))
+	}
+	return rows, worst
+}
+
+// least is the smallest size of c between two rows.
+func least(c curve.Curve, a, b float64) float64 {
+	e, _ := c.Extremes(a, b)
+	return math.Abs(e.Min)
+}
+
+func (t *task) evenRows() []float64 {
+	var rows []float64
+	for i := 0.0; t.lo+float64(i*t.step) < t.hi-1e-9; i++ {
+		rows = append(rows, t.lo+float64(i*t.step))
+	}
+	return append(rows, t.hi)
+}
+
+// chosenRows has every knot of both curves and, between two knots, as many
+// even steps as keep the line within the bound.
+func (t *task) chosenRows(rho, fixed curve.Curve) []float64 {
+	knots := t.knots(rho, fixed)
+	off := make([]float64, len(knots))
+	i, j := 0, 0
+	for k := 1; k < len(knots); k++ {
+		var a, b float64
+		a, i = chordBound(rho, knots[k-1], knots[k], i)
+		b, j = chordBound(fixed, knots[k-1], knots[k], j)
+		off[k] = math.Max(a/least(rho, knots[k-1], knots[k]), b/least(fixed, knots[k-1], knots[k]))
+	}
+	for _, ppm := range sizes[finest:] {
+		if rows := divided(knots, off, ppm*1e-6); rows != nil {
+			return rows
 		}
 	}
-	c.Flush()
-	return c.Error()
+	return knots
+}
+
+// divided cuts each interval so that its distance, which goes with the square
+// of the step, falls to within; nil when that takes too many rows.
+func divided(knots, off []float64, within float64) []float64 {
+	rows := []float64{knots[0]}
+	for k := 1; k < len(knots); k++ {
+		n := math.Max(1, math.Ceil(math.Sqrt(off[k]/within)-1e-9))
+		if float64(len(rows))+n > mostRows {
+			return nil
+		}
+		for m := 1.0; m < n; m++ {
+			rows = append(rows, knots[k-1]+float64((knots[k]-knots[k-1])*m/n))
+		}
+		rows = append(rows, knots[k])
+	}
+	return rows
+}
+
+// knots are the ends of the window and the joints of both curves inside it.
+func (t *task) knots(curves ...curve.Curve) []float64 {
+	list := []float64{t.lo, t.hi}
+	for _, c := range curves {
+		for _, s := range c.Segments {
+			if s.To > t.lo && s.To < t.hi {
+				list = append(list, s.To)
+			}
+		}
+	}
+	sort.Float64s(list)
+	kept := list[:1]
+	for _, k := range list[1:] {
+		if k-kept[len(kept)-1] > 1e-6 {
+			kept = append(kept, k)
+		}
+	}
+	kept[len(kept)-1] = t.hi
+	return kept
+}
+
+// expansionWords say whether the growth of the body has been taken out of the
+// volume resistivity. Where it has not, both columns are on fixed dimensions.
+func (t *task) expansionWords() string {
+	_, known := t.record.Expansion()
+	s := t.set
+	switch {
+	case s.Basis == "":
+		return "not known: basis not stated"
+	case s.Basis == material.Resistivity:
+		return "corrected"
+	case known && (s.Basis != material.Uncorrected || !math.IsNaN(s.DimensionsAt)):
+		return "corrected"
+	}
+	return "not corrected: no expansion recorded"
 }

@@ -114,6 +114,9 @@ func TestCSVW(t *testing.T) {
 		if _, ok := files["data/"+table.URL]; !ok {
 			t.Errorf("%s is described and not written", table.URL)
 		}
+		if table.TableSchema != "" {
+			describedBy(t, files, table)
+		}
 	}
 	var names []string
 	for _, c := range d.TableSchema.Columns {
@@ -121,5 +124,21 @@ func TestCSVW(t *testing.T) {
 	}
 	if strings.Join(names, ",") != strings.Join(csvHeads, ",") {
 		t.Errorf("columns %v", names)
+	}
+}
+
+// describedBy: the columns that a table has are those of its description.
+func describedBy(t *testing.T, files map[string]string, table csvwTable) {
+	t.Helper()
+	var s csvwSchema
+	if err := json.Unmarshal([]byte(files["data/"+table.TableSchema]), &s); err != nil {
+		t.Fatalf("%s: %v", table.TableSchema, err)
+	}
+	var names []string
+	for _, c := range s.Columns {
+		names = append(names, c.Titles)
+	}
+	if head, _, _ := strings.Cut(files["data/"+table.URL], "\r\n"); head != strings.Join(names, ",") {
+		t.Errorf("%s has %s", table.URL, head)
 	}
 }

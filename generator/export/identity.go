@@ -1,79 +1,87 @@
 package export
 
 import (
+	"bytes"
 	"strconv"
-	"strings"
-	"unicode"
 
 	"ohmfolio/generator/library"
 	"ohmfolio/generator/material"
 	"ohmfolio/generator/quantity"
+	"ohmfolio/generator/study"
 )
 
-// outsideWords stand in every file that another program reads.
-const outsideWords = "outside the valid range: no value, do not use"
+// fact is one line of what a file is about.
+type fact struct{ name, text string }
 
-// identity is what every file for another program begins with: what the
-// numbers are of, how they were come by, and how far they hold.
-func identity(lib *library.Library, r *material.Record, set *material.DataSet) [][2]string {
-	checked := string(lib.CheckedOf(set.Source))
-	if checked == "" {
-		checked = "not stated"
-	}
-	status := string(r.Status)
-	if r.Status != material.Released {
-		status += ", not for use"
-	}
-	list := [][2]string{
-		{"material", r.Name + " (" + r.ID + ")"},
+// identity says what the numbers of a file are and whether they may be used:
+// it stands at the head of every file that leaves for another program.
+func identity(lib *library.Library, r *material.Record, set *material.DataSet) []fact {
+	list := []fact{
+		{"material", r.ID + ", " + r.Name},
 		{"condition", notStated(set.Condition)},
-		{"data set", set.Name + ", " + string(set.Model) + ", basis " + notStated(string(set.Basis)) + ", class " + notStated(string(set.Class))},
-		{"source", set.Source.ID + ", checked against " + checked},
-		{"revision", strconv.Itoa(r.Revision) + ", fingerprint " + r.Fingerprint + ", " + status},
-		{"valid range", quantity.CelsiusText(set.Valid.Lo) + " to " + quantity.CelsiusText(set.Valid.Hi) + "; " + outsideWords},
+		{"state", stateText(r)},
+		{"revision", strconv.Itoa(r.Revision)},
+		{"fingerprint", r.Fingerprint},
+		{"data set", set.Name},
+		{"reference temperature", degrees(set.RatioReference)},
+		{"valid range", degrees(set.Valid.Lo) + " to " + degrees(set.Valid.Hi)},
+		{"class", notStated(string(set.Class))},
+		{"basis", notStated(string(set.Basis))},
+		{"source", set.Source.ID + ", checked against: " + notStated(string(lib.CheckedOf(set.Source)))},
+		{"tolerance", toleranceText(set)},
 	}
-	if r.Invented {
-		list = append(list, [2]string{"note", "invented data of the example, not for use"})
+	if r.NotFor != "" {
+		list = append(list, fact{"not for", r.NotFor})
 	}
 	for _, c := range set.Caveats {
-		list = append(list, [2]string{"note", c})
+		list = append(list, fact{"note", c})
 	}
-	return append(list, [2]string{"caution", "a calculation from recorded values, not an approval; verify by test, and never the only means of a protective function"})
+	for _, c := range study.SheetCautions() {
+		list = append(list, fact{"caution", c})
+	}
+	return list
 }
 
-// asciiWords are the signs of this trade in the plain characters that
-// simulators and compilers read.
-var asciiWords = strings.NewReplacer("°C", "degC", "°", "deg", "µ", "u", "μ", "u", "Ω", "ohm", "Ω", "ohm", "·", "*", "²", "2", "³", "3", "⁻¹", "-1", "−", "-", "–", "-", "±", "+/-",
-	"α", "alpha", "β", "beta", "γ", "gamma", "ρ", "rho", "×", "x", "\u202f", " ", "\u2009", " ", "\u00a0", " ", "“", "\"", "”", "\"", "’", "'")
+// toleranceText: these files carry the nominal curve alone.
+func toleranceText(set *material.DataSet) string {
+	switch {
+	case set.Ratio != nil && set.Ratio.Limits != nil:
+		return "nominal curve only; its limits stand on the material's sheet"
+	case set.Ratio != nil && set.Ratio.Uncertainty != nil:
+		return "nominal curve only; its uncertainty stands on the material's sheet"
+	}
+	return "nominal curve only; neither limits nor an uncertainty of the curve are stated"
+}
 
-// plainASCII keeps a text on one line and in printable ASCII, so that it can
-// neither end a comment nor begin a statement.
-func plainASCII(s string) string {
-	s = asciiWords.Replace(s)
-	var b strings.Builder
-	for _, c := range s {
-		switch {
-		case c == '\t' || c == '\n' || c == '\r' || unicode.IsSpace(c):
-			b.WriteByte(' ')
-		case c < 0x20 || c == 0x7f:
-		case c > 0x7e:
-			b.WriteByte('?')
-		default:
-			b.WriteRune(c)
+func stateText(r *material.Record) string {
+	text := string(r.Status)
+	switch r.Status {
+	case material.Draft, "":
+		text = "draft, not for use"
+	case material.InReview:
+		text = "in review, not for use"
+	case material.Withdrawn:
+		text = "withdrawn, not for use"
+		if r.ReplacedBy != "" {
+			text += "; replaced by " + r.ReplacedBy
 		}
 	}
-	return strings.ReplaceAll(b.String(), "*/", "* /")
-}
-
-// symbol is an ID as a name in other languages.
-func symbol(id string) string { return strings.ReplaceAll(id, "-", "_") }
-
-// safeCell keeps a text from being taken for a formula by a spreadsheet.
-func safeCell(s string) string {
-	if s != "" && strings.ContainsRune("=+-@\t\r", rune(s[0])) {
-		return "'" + s
+	if r.Invented {
+		text += "; invented data of an example, not for use"
 	}
-	return s
+	return text
 }
 
-func celsius(k float64) string { return number(k - quantity.ZeroCelsius) }
+// degrees prints a temperature in kelvin as "-40 degC", to a thousandth.
+func degrees(kelvin float64) string { return plain(quantity.CelsiusText(kelvin)) }
+
+// writeComments writes facts as lines of comment.
+func writeComments(w *bytes.Buffer, prefix string, facts []fact, clean func(string) string) {
+	for _, f := range facts {
+		w.WriteString(prefix)
+		w.WriteString(f.name)
+		w.WriteString(": ")
+		w.WriteString(clean(f.text))
+		w.WriteByte('\n')
+	}
+}

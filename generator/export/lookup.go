@@ -1,166 +1,152 @@
 package export
 
 import (
-	"bytes"
-	"encoding/csv"
+	"errors"
 	"fmt"
 	"math"
-	"strconv"
 
-	"ohmfolio/generator/curve"
-	"ohmfolio/generator/library"
-	"ohmfolio/generator/material"
 	"ohmfolio/generator/quantity"
 )
 
-// A Lookup is R(T)/R(reference) in integers for linear interpolation in
-// firmware: value = Counts[i]/Scale at First + i·Step. Between two rows the
-// interpolated value is off by less than one count; Error says by how much at
-// most, rounding of the rows included.
-type Lookup struct {
-	Reference   float64 // K, where the ratio is 1
-	First, Step int     // hundredths of °C
-	Scale       int
-	Counts      []int32
-	Error       float64 // counts, proven from the cubic segments
+// lookup is a table of R/R(nominal) − 1 in whole counts at even steps of whole
+// thousandths of a degree Celsius.
+type lookup struct {
+	task
+	first, stepM int64   // thousandths of a degree: °C of the first row, step
+	counts       []int32 // by row
+	ppm          float64 // what one count is
+	bound        float64 // proven distance of the straight line between two rows from the curve, in counts
 }
 
-// The steps that are tried, in hundredths of °C, largest first, and how many
-// rows a table may have.
-var lookupSteps = []int{5000, 2500, 2000, 1000, 500, 250, 200, 100, 50, 25, 20, 10}
+// half is what rounding a row to whole counts may cost, in counts; the line
+// between two rounded rows is off by no more.
+const half = 0.5
 
-const mostRows = 4096
+// sizes are the sizes of a count in ppm that are tried, finest first. The last
+// is so large that a table is always found.
+var sizes = []float64{1, 2, 5, 10, 20, 50, 100, 200, 500, 1e3, 2e3, 5e3, 1e4, 2e4, 5e4, 1e5, 1e6, 1e9, 1e12}
 
-// NewLookup makes the table of the adopted set over its valid range with the
-// finest scale from 10⁶ down that needs no more than 4096 rows.
-func NewLookup(r *material.Record) (Lookup, error) {
-	set := r.Adopted
-	if set == nil || !set.Ratio.HasNominal() {
-		return Lookup{}, fmt.Errorf("%s tells no nominal curve of R", r.ID)
+// mostRows is how long a chosen table may be: 512 rows of 32 bits are 2 KB.
+const mostRows = 512
+
+// mostOrderedRows is how long a table may be whose step was asked for.
+const mostOrderedRows = 1 << 16
+
+// lookupOf chooses the table: the finest count and then the longest step for
+// which the straight line between two rows, rounding of the rows included, is
+// proven to stay within one count of the curve.
+func (t task) lookupOf() (*lookup, error) {
+	l := &lookup{task: t}
+	l.first = int64(math.Ceil((t.lo-quantity.ZeroCelsius)*1000 - 1e-6))
+	last := int64(math.Floor((t.hi-quantity.ZeroCelsius)*1000 + 1e-6))
+	span := last - l.first
+	if t.step > 0 {
+		return l, l.ordered(span)
 	}
-	c, ok := curve.Ratio(set.Ratio.Nominal, set.RatioReference)
-	if !ok {
-		return Lookup{}, fmt.Errorf("%s has no R at its reference temperature", r.ID)
-	}
-	for scale := 1000000; scale >= 1000; scale /= 10 {
-		for _, whole := range []bool{true, false} { // rather a step that meets both ends
-			for _, step := range lookupSteps {
-				l := Lookup{Reference: set.RatioReference, Step: step, Scale: scale}
-				if (!whole || l.meets(set.Valid)) && l.fill(c, set.Valid) && l.Error < 1 {
-					return l, nil
-				}
+	steps := evenSteps(span)
+	for _, l.ppm = range sizes {
+		for _, l.stepM = range steps {
+			if l.proven(span) && l.fill(span) {
+				return l, nil
 			}
 		}
 	}
-	return Lookup{}, fmt.Errorf("%s has no table of %d rows within one count in a thousand", r.ID, mostRows)
+	return nil, errors.New("the curve is not finite")
 }
 
-func hundredths(k float64) float64 { return (k - quantity.ZeroCelsius) * 100 }
-
-func (l *Lookup) kelvin(i int) float64 {
-	return quantity.ZeroCelsius + float64(l.First+i*l.Step)/100
-}
-
-// meets tells whether rows from the lower end of the range meet its upper end.
-func (l *Lookup) meets(valid material.Window) bool {
-	over := math.Mod(hundredths(valid.Hi)-math.Ceil(hundredths(valid.Lo)-1e-6)+1e-6, float64(l.Step))
-	return over < 2e-6
-}
-
-// fill makes the rows and proves their error; false when there are too few or
-// too many.
-func (l *Lookup) fill(c curve.Curve, valid material.Window) bool {
-	first := math.Ceil(hundredths(valid.Lo) - 1e-6)
-	n := int(math.Floor((hundredths(valid.Hi)-first)/float64(l.Step)+1e-6)) + 1
-	if n < 2 || n > mostRows {
-		return false
+// evenSteps lists the steps that divide the span into at most mostRows−1
+// parts, longest first. A span with few divisors also gets steps that leave
+// less than a step over at its upper end.
+func evenSteps(span int64) []int64 {
+	var even, odd []int64
+	for n := int64(1); n < mostRows && n <= span; n++ {
+		if span%n == 0 {
+			even = append(even, span/n)
+		} else if n&(n-1) == 0 {
+			odd = append(odd, span/n)
+		}
 	}
-	l.First, l.Counts = int(first), make([]int32, n)
-	for i := range l.Counts {
-		v, ok := c.At(clamp(l.kelvin(i), valid))
-		x := math.Round(float64(v * float64(l.Scale)))
-		if !ok || math.Abs(x) > math.MaxInt32 {
+	if len(even) < 8 {
+		return odd
+	}
+	return even
+}
+
+// ordered takes the step that was asked for and the finest count that it bears.
+func (l *lookup) ordered(span int64) error {
+	l.stepM = int64(math.Round(l.step * 1000))
+	if l.stepM < 1 || math.Abs(float64(l.stepM)-l.step*1000) > 1e-6 {
+		return errors.New("the step is not a whole number of thousandths of a kelvin")
+	}
+	if l.stepM > span || span/l.stepM >= mostOrderedRows {
+		return fmt.Errorf("the step gives %d rows; ask for 2 to %d", span/l.stepM+1, mostOrderedRows)
+	}
+	for _, l.ppm = range sizes {
+		if l.proven(span) && l.fill(span) {
+			return nil
+		}
+	}
+	return errors.New("the curve is not finite")
+}
+
+// kelvin is the temperature of a row.
+func (l *lookup) kelvin(row int64) float64 {
+	return quantity.ZeroCelsius + float64(l.first+row*l.stepM)/1000
+}
+
+// proven tells whether no interval may be off by a count, and keeps the bound.
+func (l *lookup) proven(span int64) bool {
+	count := float64(l.ppm * 1e-6)
+	l.bound = half
+	at, from := 0, l.kelvin(0)
+	for row := int64(1); row <= span/l.stepM; row++ {
+		to := l.kelvin(row)
+		var b float64
+		b, at = chordBound(l.ratio, from, to, at)
+		if b = half + b/count; !(b < 1) {
 			return false
 		}
-		l.Counts[i] = int32(x)
+		l.bound, from = math.Max(l.bound, b), to
 	}
-	l.Error = l.proven(c, valid)
 	return true
 }
 
-func clamp(t float64, w material.Window) float64 { return math.Max(w.Lo, math.Min(w.Hi, t)) }
-
-// proven is the largest difference of the curve from the interpolated rows in
-// counts: the extremes of cubic minus straight line, cell by cell.
-func (l *Lookup) proven(c curve.Curve, valid material.Window) float64 {
-	worst, first := 0.0, 0
-	for i := range len(l.Counts) - 1 {
-		a, b := clamp(l.kelvin(i), valid), clamp(l.kelvin(i+1), valid)
-		y0, y1 := float64(l.Counts[i])/float64(l.Scale), float64(l.Counts[i+1])/float64(l.Scale)
-		slope := (y1 - y0) / (b - a)
-		for first < len(c.Segments)-1 && c.Segments[first].To <= a {
-			first++
+// fill computes the rows; false when 32 bits do not hold one of them.
+func (l *lookup) fill(span int64) bool {
+	l.counts = make([]int32, span/l.stepM+1)
+	for i := range l.counts {
+		v, ok := l.ratio.At(l.kelvin(int64(i)))
+		c := math.RoundToEven((quantity.Round12(v) - 1) / float64(l.ppm*1e-6))
+		if !ok || !(math.Abs(c) <= math.MaxInt32) {
+			return false
 		}
-		for k := first; k < len(c.Segments) && c.Segments[k].From < b; k++ {
-			g := c.Segments[k]
-			g.C[0] -= y0 + slope*(g.Centre-a)
-			g.C[1] -= slope
-			one := curve.Curve{Segments: []curve.Segment{g}}
-			e, ok := one.Extremes(math.Max(a, g.From), math.Min(b, g.To))
-			if ok {
-				worst = math.Max(worst, math.Max(math.Abs(e.Min), math.Abs(e.Max)))
-			}
-		}
+		l.counts[i] = int32(c)
 	}
-	return worst * float64(l.Scale)
+	return true
 }
 
-// facts are what both forms of the table say of themselves.
-func (l Lookup) facts() [][2]string {
-	last := l.First + (len(l.Counts)-1)*l.Step
-	return [][2]string{
-		{"value", "R(T)/R(" + number(l.Reference-quantity.ZeroCelsius) + " degC) of a fixed body = count / " + strconv.Itoa(l.Scale)},
-		{"rows", strconv.Itoa(len(l.Counts)) + " from " + number(float64(l.First)/100) + " degC to " + number(float64(last)/100) + " degC by " + number(float64(l.Step)/100) + " K"},
-		{"between rows", "interpolate linearly; largest error " + quantity.Fixed(l.Error, 2) + " counts, rounding included"},
-		{"at the ends", "refuse: outside the rows there is no value"},
+// bits is the width of integer that holds every row.
+func (l *lookup) bits() int {
+	for _, c := range l.counts {
+		if c > math.MaxInt16 || c < math.MinInt16 {
+			return 32
+		}
 	}
+	return 16
 }
 
-// WriteHeader writes the table as a C header.
-func WriteHeader(w *bytes.Buffer, lib *library.Library, r *material.Record, l Lookup) {
-	name := symbol(r.ID)
-	w.WriteString("/*\n")
-	for _, x := range append(identity(lib, r, r.Adopted), l.facts()...) {
-		w.WriteString(" * " + x[0] + ": " + plainASCII(x[1]) + "\n")
-	}
-	w.WriteString(" */\n#include <stdint.h>\n\n")
-	fmt.Fprintf(w, "enum {\n    r_%[1]s_scale = %[2]d,        /* counts for a ratio of 1 */\n    r_%[1]s_first = %[3]d,        /* hundredths of degC */\n    r_%[1]s_step = %[4]d,         /* hundredths of a kelvin */\n    r_%[1]s_rows = %[5]d\n};\n\n", name, l.Scale, l.First, l.Step, len(l.Counts))
-	fmt.Fprintf(w, "static const int32_t r_%s[%d] = {", name, len(l.Counts))
-	for i, n := range l.Counts {
-		if i%8 == 0 {
-			w.WriteString("\n    ")
-		}
-		w.WriteString(strconv.Itoa(int(n)) + ",")
-		if i%8 != 7 && i != len(l.Counts)-1 {
-			w.WriteByte(' ')
+// productFits tells whether difference of two rows times remainder fits 32 bits.
+func (l *lookup) productFits() bool {
+	for i := 1; i < len(l.counts); i++ {
+		d := int64(l.counts[i]) - int64(l.counts[i-1])
+		if max(d, -d)*l.stepM > math.MaxInt32 {
+			return false
 		}
 	}
-	w.WriteString("\n};\n")
+	return true
 }
 
-// WriteLookup writes the table as CSV, with its identity in every row.
-func WriteLookup(w *bytes.Buffer, r *material.Record, l Lookup) error {
-	c := csv.NewWriter(w)
-	c.UseCRLF = true
-	if err := c.Write([]string{"material", "data_set", "revision", "fingerprint", "status", "temperature_C", "count", "scale", "ratio_reference_C", "largest_error_counts"}); err != nil {
-		return err
-	}
-	for i, n := range l.Counts {
-		if err := c.Write([]string{r.ID, r.Adopted.Name, strconv.Itoa(r.Revision), r.Fingerprint, string(r.Status), number(float64(l.First+i*l.Step) / 100),
-			strconv.Itoa(int(n)), strconv.Itoa(l.Scale), number(l.Reference - quantity.ZeroCelsius), quantity.Fixed(l.Error, 2)}); err != nil {
-			return err
-		}
-	}
-	c.Flush()
-	return c.Error()
+// uncovered is what the even steps leave over of the window, in thousandths.
+func (l *lookup) uncovered() int64 {
+	return int64(math.Floor((l.hi-quantity.ZeroCelsius)*1000+1e-6)) - l.first - int64(len(l.counts)-1)*l.stepM
 }

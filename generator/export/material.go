@@ -9,7 +9,7 @@ import (
 	"ohmfolio/generator/quantity"
 )
 
-// MaterialJSON is data/ID.json; the names are a contract.
+// MaterialJSON is what a reference states of one material; the names are a contract.
 type MaterialJSON struct {
 	ID          string         `json:"id"`
 	Name        string         `json:"name"`

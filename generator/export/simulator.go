@@ -4,167 +4,88 @@ import (
 	"bytes"
 	"fmt"
 	"math"
-	"strconv"
 
 	"ohmfolio/generator/curve"
-	"ohmfolio/generator/fit"
 	"ohmfolio/generator/library"
 	"ohmfolio/generator/material"
 	"ohmfolio/generator/quantity"
 )
 
-// SimulatorNominal is the nominal temperature that most circuit simulators
-// assume: 27 °C.
-const SimulatorNominal = quantity.ZeroCelsius + 27
-
-// A Line is R(T) as a circuit simulator takes it:
-//
-//	R(T) = R(Nominal)·(1 + TC1·(T − Nominal) + TC2·(T − Nominal)²)
-//
-// TC1 in 1/K, TC2 in 1/K². It is exact when the curve is a quadratic of R over
-// its whole range, otherwise a least-squares fit that is right at the nominal
-// temperature, with its largest error.
-type Line struct {
-	Nominal  float64 // K
-	TC1, TC2 float64
-	Exact    bool
-	Lo, Hi   float64 // K, the window of the fit
-	Error    float64 // relative, the largest over the window
-	ErrorAt  float64 // K
-	Over     float64 // R(Nominal)/R(reference of the data set)
-	Curve    curve.Curve
-}
-
-// Simulator makes the line of the adopted set about nominal over [lo, hi] (K);
-// lo = hi = 0 is the whole valid range. It refuses a nominal temperature outside
-// the valid range, and a material whose R(T) is not known.
-func Simulator(r *material.Record, nominal, lo, hi float64) (Line, error) {
-	set := r.Adopted
-	if set == nil || !set.Ratio.HasNominal() {
-		return Line{}, fmt.Errorf("%s tells no nominal curve of R", r.ID)
-	}
-	if !set.Valid.Contains(nominal) {
-		return Line{}, fmt.Errorf("the nominal temperature %s lies outside the valid range %s to %s of %s",
-			quantity.CelsiusText(nominal), quantity.CelsiusText(set.Valid.Lo), quantity.CelsiusText(set.Valid.Hi), r.ID)
-	}
-	if lo == 0 && hi == 0 {
-		lo, hi = set.Valid.Lo, set.Valid.Hi
-	}
-	if !set.Valid.Contains(lo) || !set.Valid.Contains(hi) || !(lo < hi) {
-		return Line{}, fmt.Errorf("the window %s to %s does not lie inside the valid range of %s", quantity.CelsiusText(lo), quantity.CelsiusText(hi), r.ID)
-	}
-	whole, ok := curve.Ratio(set.Ratio.Nominal, nominal)
-	if !ok {
-		return Line{}, fmt.Errorf("%s has no R at %s", r.ID, quantity.CelsiusText(nominal))
-	}
-	whole, err := whole.Clip(lo, hi)
-	if err != nil {
-		return Line{}, err
-	}
-	at, _ := set.Ratio.Nominal.At(nominal)
-	l := Line{Nominal: nominal, Lo: lo, Hi: hi, Over: at, Curve: whole}
-	if g := whole.Segments[0]; len(whole.Segments) == 1 && g.C[3] == 0 {
-		d := nominal - g.Centre
-		l.TC1, l.TC2, l.Exact = g.C[1]+float64(2*g.C[2]*d), g.C[2], true
-		return l, nil
-	}
-	return l, l.fit()
-}
-
-// linePoints of a fit: dense, since what is fitted is a curve and not data.
-const linePoints = 161
-
-func (l *Line) fit() error {
-	var points []fit.Point
-	for i := range linePoints {
-		t := math.Min(l.Lo+float64((l.Hi-l.Lo)*float64(i)/(linePoints-1)), l.Hi)
-		if y, ok := l.Curve.At(t); ok {
-			points = append(points, fit.Point{T: t, Y: y})
-		}
-	}
-	r, err := fit.Polynomial(points, fit.Options{Reference: l.Nominal, Degree: 2, Hold: true, Held: 1})
+// Simulator writes a material for circuit simulators: a resistor model with
+// TC1, TC2 and TNOM, and the curve itself as an expression where it is not a
+// parabola. The nominal temperature is 27 °C unless the order says otherwise.
+func Simulator(w *bytes.Buffer, lib *library.Library, r *material.Record, o Order) error {
+	t, err := o.take(r, simulatorNominal)
 	if err != nil {
 		return err
 	}
-	l.TC1, l.TC2 = r.B[1], r.B[2]
-	l.Error, l.ErrorAt = l.largest()
+	p := t.parabolaOf()
+	name := word(r.ID)
+	w.WriteString("* Resistance over temperature, for circuit simulators\n")
+	writeComments(w, "* ", identity(lib, r, t.set), plain)
+	fmt.Fprintf(w, "* quantity: resistance of a fixed body; see the notes, if any\n")
+	fmt.Fprintf(w, "* nominal temperature: %s, written as tnom, whatever the simulator takes for its own\n", degrees(t.nominal))
+	fmt.Fprintf(w, "* base value: the ohms at %s; they are %s times those at %s\n", degrees(t.nominal), number(t.scale), degrees(t.set.RatioReference))
+	w.WriteString("* letters after a number: m and M both mean thousandths here, meg means millions\n")
+	fmt.Fprintf(w, "* outside the valid range: the simulator goes on without a word; do not use\n*\n")
+	t.writeModel(w, name, p)
+	if !p.exact {
+		t.writeExpression(w, name)
+	}
 	return nil
 }
 
-// largest is the exact largest difference of the curve from the quadratic.
-func (l *Line) largest() (relative, at float64) {
-	d := curve.Curve{Segments: append([]curve.Segment(nil), l.Curve.Segments...)}
-	for i := range d.Segments {
-		g := &d.Segments[i]
-		x := g.Centre - l.Nominal
-		g.C[0] -= 1 + float64(x*(l.TC1+float64(x*l.TC2)))
-		g.C[1] -= l.TC1 + float64(2*x*l.TC2)
-		g.C[2] -= l.TC2
-	}
-	e, _ := d.Extremes(l.Lo, l.Hi)
-	if math.Abs(e.Min) > math.Abs(e.Max) {
-		return e.Min, e.MinAt
-	}
-	return e.Max, e.MaxAt
-}
-
-// mostExpression is from how many segments on no expression is written: a
-// table has one for each row, and such a line would help nobody.
-const mostExpression = 24
-
-// WriteSimulator writes the line with the identity of its numbers as comments.
-func WriteSimulator(w *bytes.Buffer, lib *library.Library, r *material.Record, l Line) {
-	name := symbol(r.ID)
-	comment := func(text string) { w.WriteString("* " + plainASCII(text) + "\n") }
-	for _, x := range identity(lib, r, r.Adopted) {
-		comment(x[0] + ": " + x[1])
-	}
-	celsius := number(l.Nominal - quantity.ZeroCelsius)
-	comment("R(T) of a fixed body over R at " + celsius + " degC; TC1 in 1/K, TC2 in 1/K2, not ppm; give R at " + celsius + " degC")
-	comment("R at " + celsius + " degC is R at the reference temperature " + quantity.CelsiusText(r.Adopted.RatioReference) + " times " + number(l.Over))
-	if l.Exact {
-		comment("exact from " + quantity.CelsiusText(l.Lo) + " to " + quantity.CelsiusText(l.Hi) + ": the curve is a quadratic of R there")
+// writeModel writes the parabola; coefficients in 1/K and 1/K2.
+func (t *task) writeModel(w *bytes.Buffer, name string, p parabola) {
+	window := degrees(t.lo) + " to " + degrees(t.hi)
+	if p.exact {
+		fmt.Fprintf(w, "* the model is the curve itself over %s\n", window)
 	} else {
-		comment("fitted over " + quantity.CelsiusText(l.Lo) + " to " + quantity.CelsiusText(l.Hi) + "; largest error " + quantity.PPMText(l.Error) + " ppm at " + quantity.Fixed(l.ErrorAt-quantity.ZeroCelsius, 0) + " degC")
+		fmt.Fprintf(w, "* the model is a least-squares fit over %s, exact at %s\n", window, degrees(t.nominal))
+		fmt.Fprintf(w, "* largest error of the fit: %s ppm of the base value, at %s\n", ppmUp(p.worst), degrees(p.worstAt))
 	}
-	fmt.Fprintf(w, ".model r_%s r (tc1=%s tc2=%s tnom=%s)\n", name, number(l.TC1), number(l.TC2), celsius)
-	if l.Exact {
-		return
-	}
-	if len(l.Curve.Segments) > mostExpression {
-		comment("no expression is written: the curve has " + strconv.Itoa(len(l.Curve.Segments)) + " pieces; use the look-up table where the error above is too large")
-		return
-	}
-	comment("the same without the error of a fit, R1 a b R='R0*f_" + name + "(temper)', products written out")
-	w.WriteString(".func f_" + name + "(t) {" + expression(l.Curve) + "}\n")
+	fmt.Fprintf(w, "* example: r1 a b 0.25 %s\n", name)
+	fmt.Fprintf(w, ".model %s r (tc1=%s tc2=%s tnom=%s)\n", name, number(p.tc1), number(p.tc2), number(t.nominal-quantity.ZeroCelsius))
 }
 
-// expression writes the segments as products, lowest first; beyond the last
-// edge the last segment goes on.
-func expression(c curve.Curve) string {
-	var b bytes.Buffer
-	last := len(c.Segments) - 1
-	for i, g := range c.Segments {
-		x := "(t-" + bracket(g.Centre-quantity.ZeroCelsius) + ")"
-		p := bracket(g.C[0]) + "+" + x + "*(" + bracket(g.C[1]) + "+" + x + "*(" + bracket(g.C[2]) + "+" + x + "*" + bracket(g.C[3]) + "))"
-		if i == last {
-			b.WriteString("(" + p + ")")
-			break
+// ppmUp prints a relative error in ppm to three digits, rounded up.
+func ppmUp(x float64) string {
+	x *= 1e6
+	if !(x > 0) {
+		return "0"
+	}
+	place := math.Pow(10, math.Floor(math.Log10(x))-2)
+	return number(math.Ceil(x/place-1e-9) * place)
+}
+
+// writeExpression writes the curve as a sum of cubic pieces, each of them held
+// at its ends and made of products: a power of a negative number is not the
+// same in all simulators, and min and max are.
+func (t *task) writeExpression(w *bytes.Buffer, name string) {
+	fmt.Fprintf(w, "*\n* the curve itself, as an expression over the whole valid range; at the ends it holds its value\n")
+	fmt.Fprintf(w, "* temper is the temperature of the circuit in degC, without what is set for one part alone (dtemp, temp)\n")
+	fmt.Fprintf(w, "* where a simulator names it otherwise, change it in the line that begins with r1\n")
+	fmt.Fprintf(w, "* example: x1 a b %s_curve base=0.25\n", name)
+	fmt.Fprintf(w, ".subckt %s_curve a b base=1\n", name)
+	fmt.Fprintf(w, ".func %s_held(t,lo,hi) {min(max(t,(lo)),(hi))-(lo)}\n", name)
+	fmt.Fprintf(w, ".func %s_cubic(u,c1,c2,c3) {(u)*((c1)+(u)*((c2)+(u)*(c3)))}\n", name)
+	segments := t.ratio.Segments
+	fmt.Fprintf(w, ".func %s_ratio(t) {%s", name, number(valueOf(&segments[0], segments[0].From)))
+	for i := range segments {
+		s := &segments[i]
+		if i > 0 {
+			writeStep(w, &segments[i-1], s)
 		}
-		b.WriteString("(t<=" + number(g.To-quantity.ZeroCelsius) + " ? (" + p + ") : ")
+		fmt.Fprintf(w, "\n+ +%s_cubic(%s_held(t,%s,%s),%s,%s,%s)", name, name,
+			number(s.From-quantity.ZeroCelsius), number(s.To-quantity.ZeroCelsius), number(first(s, s.From)), number(second(s, s.From)/2), number(s.C[3]))
 	}
-	for range last {
-		b.WriteByte(')')
-	}
-	return b.String()
+	fmt.Fprintf(w, "}\nr1 a b r={base*%s_ratio(temper)}\n.ends\n", name)
 }
 
-// bracket keeps a sign from meeting another one; 17 digits, since an
-// expression is no table for people.
-func bracket(x float64) string {
-	s := strconv.FormatFloat(x, 'g', 17, 64)
-	if x < 0 {
-		return "(" + s + ")"
+// writeStep writes the step of two pieces that join with one.
+func writeStep(w *bytes.Buffer, below, above *curve.Segment) {
+	step := valueOf(above, above.From) - valueOf(below, below.To)
+	if math.Abs(step) > 1e-11 {
+		fmt.Fprintf(w, "\n+ +(t > %s ? %s : 0)", number(below.To-quantity.ZeroCelsius), number(step))
 	}
-	return s
 }

@@ -5,6 +5,7 @@ import (
 	"encoding/csv"
 	"errors"
 	"io"
+	"slices"
 	"strings"
 
 	"ohmfolio/generator/place"
@@ -67,6 +68,10 @@ func csvReason(err error) string {
 	return err.Error()
 }
 
-// LeaveOutOffers forgets every price: what is computed and written afterwards
-// may go to customers.
-func (l *Library) LeaveOutOffers() { l.Offers, l.Settings.Rates = nil, nil }
+// LeaveOutOffers forgets every price, every rate and what reading offers.csv found: what
+// is computed and written afterwards may go to customers. It is for the one who
+// loaded the library, before anyone else sees it.
+func (l *Library) LeaveOutOffers() {
+	l.Offers, l.Settings.Rates = nil, nil
+	l.Findings = slices.DeleteFunc(l.Findings, func(f place.Finding) bool { return f.Position.File == offersFile })
+}

@@ -124,21 +124,3 @@ func (s *DataSet) coefficients(p *curve.Polynomial) bool {
 	}
 	return ok
 }
-
-// TellsRatioAt tells whether the adopted set has a nominal curve of R that
-// holds at t (K).
-func (r *Record) TellsRatioAt(t float64) bool {
-	s := r.Adopted
-	return s != nil && s.Ratio.HasNominal() && s.Valid.Hi > s.Valid.Lo && s.Valid.Contains(t)
-}
-
-// TellsRatio tells whether the adopted set has a nominal curve of R.
-func (r *Record) TellsRatio() bool {
-	return r.Adopted != nil && r.TellsRatioAt(r.Adopted.RatioReference)
-}
-
-// TellsResistivity tells whether the adopted set has a nominal curve of ρ.
-func (r *Record) TellsResistivity() bool {
-	s := r.Adopted
-	return s != nil && s.Rho.HasNominal() && s.Valid.Hi > s.Valid.Lo
-}

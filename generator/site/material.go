@@ -21,6 +21,7 @@ type materialPage struct {
 	History     []historyRow
 	Copy        copyMark // of the sheet
 	PDF         bool
+	Files       []File
 }
 
 // pair is the statement that a page and its sheet share: computed by the one
@@ -53,6 +54,9 @@ func (s *site) materialPair(r *material.Record) (page, sheet output.Output) {
 		p.frame = s.frame(r.Name, "material", "../", "materials.html", "review.js")
 		p.Contents = materialContents(p.S)
 		p.History = s.history(r.ID)
+		if s.in.Files != nil {
+			p.Files = s.in.Files(r)
+		}
 		return p
 	})
 	sheet = s.page("sheet/"+r.ID+".html", "sheet-page", func() any {

@@ -22,7 +22,8 @@ type Input struct {
 	Statement func(r *material.Record) *statement.Statement // computed when asked for, and forgotten
 	Outcomes  map[string][]*study.Outcome                   // by document, "reports/x", in order of blocks
 	Findings  []place.Finding
-	Theme     fs.FS // templates, styles and scripts
+	Files     func(r *material.Record) []File // for other programs; nil: none
+	Theme     fs.FS                           // templates, styles and scripts
 	// Answer gives the current value of a live number: text, note, and
 	// whether there is one.
 	Answer func(question, written, materialID string) (text, note string, ok bool)
@@ -32,6 +33,10 @@ type Input struct {
 	Changes  func() *changes.Report // from the newest edition to now, nil when there is none
 	History  func(materialID string) []changes.Entry
 }
+
+// A File is a file of one material for other programs, or why there is none;
+// For is empty where there is none at all.
+type File struct{ For, Path, Refused string }
 
 // Outputs lists every page, style and script. The error names the template
 // that cannot be used.

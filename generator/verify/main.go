@@ -1,7 +1,7 @@
 // Command verify runs every check of the project. It installs what the checks
-// need when it is missing, and says so: Debian's chromium, poppler and GNU
-// units, a Java runtime, and two npm packages (an HTML validator and an
-// accessibility checker). With CI=true a check that cannot run fails.
+// need when it is missing, and says so: Debian's chromium, poppler, GNU units,
+// ngspice and gcc, a Java runtime, and two npm packages (an HTML validator and
+// an accessibility checker). With CI=true a check that cannot run fails.
 //
 //	go run ./generator/verify
 package main

@@ -9,7 +9,7 @@ import (
 
 // debian maps a program that the checks call to the package that brings it.
 var debian = []struct{ program, pkg string }{
-	{"chromium", "chromium"}, {"pdftotext", "poppler-utils"}, {"units", "units"}, {"java", "default-jre-headless"}, {"npm", "npm"}, {"ngspice", "ngspice"}, {"qpdf", "qpdf"}, {"zbarimg", "zbar-tools"},
+	{"chromium", "chromium"}, {"pdftotext", "poppler-utils"}, {"units", "units"}, {"java", "default-jre-headless"}, {"npm", "npm"}, {"ngspice", "ngspice"}, {"gcc", "gcc"}, {"qpdf", "qpdf"}, {"zbarimg", "zbar-tools"},
 	{"Rscript", "r-base-core"},
 }
 
