@@ -17,6 +17,7 @@ type materialPage struct {
 	Replacement *link
 	Contents    []contentsItem
 	BandWords   string
+	AskScripts  string // loaded when the reader asks a value
 	Cautions    cautionList
 	History     []historyRow
 	Copy        copyMark // of the sheet
@@ -53,6 +54,7 @@ func (s *site) materialPair(r *material.Record) (page, sheet output.Output) {
 		p.frame = s.frame(r.Name, "material", "../", "materials.html", "review.js")
 		p.Contents = materialContents(p.S)
 		p.History = s.history(r.ID)
+		p.AskScripts = s.scripts("../", "reading.js") + " ../data/" + r.ID + ".js " + s.scripts("../", "ask.js")
 		return p
 	})
 	sheet = s.page("sheet/"+r.ID+".html", "sheet-page", func() any {
@@ -98,6 +100,7 @@ func materialContents(st *statement.Statement) []contentsItem {
 			list = append(list, contentsItem{id, text})
 		}
 	}
+	add(true, "ask", "Ask")
 	add(st.RhoFigure != nil || st.RatioFigure != nil, "curves", "Curves")
 	add(len(st.Values.Rows) > 0, "values", "Values")
 	add(len(st.Constants.Rows) > 0, "constants", "Constants")
