@@ -9,40 +9,24 @@
   var rows = Array.prototype.slice.call(document.querySelectorAll("#list tbody tr"));
   var byId = {};
   listed.forEach(function (m) { byId[m.id] = m; });
-  form.hidden = false;
 
   function field(id) { return document.getElementById(id).value.trim(); }
 
-  // number reads "0.1", and says what is wrong with "0,1".
-  function number(text) {
-    if (text.indexOf(",") >= 0) throw "write a decimal point: " + text.replace(",", ".");
-    var x = Number(text.replace("\u2212", "-"));
-    if (text === "" || !isFinite(x)) throw "“" + text + "” is no number";
-    return x;
-  }
+  var unit = quantity.find("resistivity", form.getAttribute("data-resistivity"));
 
-  // temperature in kelvin from "85 °C", "-40", "300 K", "185 °F"; bare numbers
-  // are °C.
-  function temperature(text) {
-    var m = /^(.*?)\s*(°C|degC|C|K|°F|degF|F)?$/.exec(text), x = number(m[1].trim());
-    var t = !m[2] || m[2].slice(-1) === "C" ? x + 273.15 : m[2] === "K" ? x : (x + 459.67) * 5 / 9;
-    if (t < 0) throw "“" + text + "” lies below absolute zero";
-    return t;
-  }
+  function temperature(text) { return quantity.number("temperature", text, preference.temperatureUnit).value; }
+  function resistivity(text) { return quantity.number("resistivity", text, unit.s).value; }
 
-  // share from "0.1 %" or "1000 ppm"; a bare number needs its unit.
   function share(text) {
-    var m = /^(.*?)\s*(%|ppm)$/.exec(text);
-    if (!m) throw "write the change with % or ppm: 0.1 %";
-    var x = number(m[1].trim()) * (m[2] === "%" ? 1e-2 : 1e-6);
+    var x = quantity.number("ratio", text, "%").value;
     if (x < 0) throw "write the change without a sign";
     return x;
   }
 
   function question() {
     var q = { text: field("text").toLowerCase(), family: field("family"), drafts: document.getElementById("drafts").checked };
-    if (field("rho-from")) q.rhoFrom = number(field("rho-from"));
-    if (field("rho-to")) q.rhoTo = number(field("rho-to"));
+    if (field("rho-from")) q.rhoFrom = resistivity(field("rho-from"));
+    if (field("rho-to")) q.rhoTo = resistivity(field("rho-to"));
     if (field("change")) {
       q.change = share(field("change"));
       q.lo = temperature(field("from"));
@@ -59,9 +43,10 @@
     if (q.text && m.words.indexOf(q.text) < 0) return "out";
     if (q.family && m.family !== q.family) return "out";
     if (q.rhoFrom !== undefined || q.rhoTo !== undefined) {
-      if (m.rho === null) return "out";
-      if (q.rhoFrom !== undefined && m.rho < q.rhoFrom) return "out";
-      if (q.rhoTo !== undefined && m.rho > q.rhoTo) return "out";
+      var rho = m.rho && evaluate.value(m.rho, 293.15);
+      if (rho === null) return "out";
+      if (q.rhoFrom !== undefined && rho < q.rhoFrom) return "out";
+      if (q.rhoTo !== undefined && rho > q.rhoTo) return "out";
     }
     if (q.change === undefined) return "shown";
     if (!m.ratio) return "untold";

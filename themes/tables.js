@@ -46,9 +46,18 @@
     });
   }
 
+  // The reader's decimal mark; see preference.js, which writes it.
+  var comma = false;
+  try { comma = JSON.parse(localStorage.getItem("read-in")).mark === ","; } catch (none) { comma = false; }
+
+  function cellText(c) {
+    var text = c.textContent.trim().replace(/\s+/g, " ").replace(/\u2212(?=\d)/g, "-");
+    return comma ? text.replace(/(\d)\.(?=\d)/g, "$1,") : text;
+  }
+
   function asText(table) {
     return Array.prototype.map.call(table.rows, function (row) {
-      return Array.prototype.map.call(row.cells, function (c) { return c.textContent.trim().replace(/\s+/g, " "); }).join("\t");
+      return Array.prototype.map.call(row.cells, cellText).join("\t");
     }).join("\n");
   }
 
@@ -75,6 +84,7 @@
     (table.closest(".scroll") || table).insertAdjacentElement("afterend", button);
   }
 
+  window.tables = { makeSortable: makeSortable, addCopy: addCopy, asText: asText, copy: copy };
   document.querySelectorAll("table.sortable").forEach(makeSortable);
   document.querySelectorAll("table:not(.sheet)").forEach(addCopy);
 })();

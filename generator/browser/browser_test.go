@@ -15,6 +15,7 @@ import (
 	"testing"
 	"time"
 
+	"github.com/chromedp/cdproto/emulation"
 	"github.com/chromedp/cdproto/runtime"
 	"github.com/chromedp/chromedp"
 
@@ -23,7 +24,7 @@ import (
 
 // pages is one page of every kind.
 var pages = []string{"index.html", "materials.html", "material/cumn12ni.html", "material/copper-annealed.html", "material/zinc.html", "material/manganin-textbook.html",
-	"material/platinum-thermometer.html", "sheet/cumn12ni-strip-lot.html", "side-by-side.html", "decisions.html", "sources.html", "review.html", "editions.html", "changes.html", "check.html", "material/busbar-copper-lot.html", "words.html"}
+	"material/platinum-thermometer.html", "sheet/cumn12ni-strip-lot.html", "side-by-side.html", "first-shunt.html", "decisions.html", "sources.html", "review.html", "editions.html", "changes.html", "check.html", "material/busbar-copper-lot.html", "words.html"}
 
 // need skips on a developer's machine and fails in CI when a program is missing.
 func need(t *testing.T, program string) {
@@ -115,6 +116,9 @@ func chrome(t *testing.T) context.Context {
 			}
 		}
 	})
+	if err := chromedp.Run(ctx, emulation.SetFocusEmulationEnabled(true)); err != nil { // or nothing is ever focused
+		t.Fatal(err)
+	}
 	return ctx
 }
 
@@ -152,7 +156,7 @@ func TestAccessible(t *testing.T) {
 		for _, page := range kinds(t) {
 			var result []string
 			err := chromedp.Run(ctx,
-				chromedp.Navigate(base+page),
+				chromedp.Navigate(base+page), inUse(),
 				chromedp.Evaluate(string(axe), nil),
 				chromedp.Evaluate(`axe.run().then(r => r.violations.map(v => v.id + ": " + v.help + " " + v.nodes.slice(0, 2).map(n => n.html.slice(0, 120)).join(" | ")))`, &result,
 					func(p *runtime.EvaluateParams) *runtime.EvaluateParams { return p.WithAwaitPromise(true) }))
@@ -166,6 +170,18 @@ func TestAccessible(t *testing.T) {
 	}
 }
 
+// inUse opens what a reader can open on a page and types into what finds.
+func inUse() chromedp.Action {
+	return chromedp.Evaluate(`new Promise(function (done) {
+		var f = document.getElementById("find-text");
+		if (f) { f.value = "copper"; f.focus(); }
+		if (document.getElementById("ask-at")) document.getElementById("ask-at").focus();
+		if (document.getElementById("read-in")) document.getElementById("read-in").dispatchEvent(new Event("pointerover"));
+		document.querySelectorAll("main details").forEach(d => { d.open = true; });
+		setTimeout(done, 200);
+	})`, nil, awaiting)
+}
+
 // TestNothingFromOutside: pages ask for nothing but their own folder, and
 // nothing that they ask for is missing.
 func TestNothingFromOutside(t *testing.T) {
@@ -174,7 +190,7 @@ func TestNothingFromOutside(t *testing.T) {
 		for _, page := range kinds(t) {
 			var asked []string
 			var styled bool
-			if err := chromedp.Run(ctx, chromedp.Navigate(base+page),
+			if err := chromedp.Run(ctx, chromedp.Navigate(base+page), inUse(),
 				chromedp.Evaluate(`performance.getEntriesByType("resource").map(r => r.name)`, &asked),
 				chromedp.Evaluate(`getComputedStyle(document.querySelector(".incomplete")).display === "none"`, &styled)); err != nil {
 				t.Fatal(err)

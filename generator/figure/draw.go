@@ -3,6 +3,7 @@ package figure
 import (
 	"bytes"
 	"io"
+	"slices"
 
 	"github.com/golang/freetype/truetype"
 	"github.com/wcharczuk/go-chart/v2"
@@ -13,7 +14,7 @@ var noFont = new(truetype.Font)
 
 // render draws the figure through go-chart onto the SVG renderer.
 func (f *Figure) render(b *bytes.Buffer, l layout) error {
-	return f.through(l, &svgRenderer{b: b, f: f, width: l.width, height: l.height}, b)
+	return f.through(l, &svgRenderer{b: b, f: f, width: l.width, height: l.height, scale: l.scale()}, b)
 }
 
 // through lets go-chart frame the drawing and a renderer write it.
@@ -69,22 +70,12 @@ func grid(r chart.Renderer, l layout) {
 
 func area(r chart.Renderer, l layout, a Area) {
 	r.SetClassName("area " + ink(a.Ink))
-	for i := range a.X {
-		step(r, i == 0, l.x.at(a.X[i]), l.y.at(a.Upper[i]))
-	}
-	for i := len(a.X) - 1; i >= 0; i-- {
-		r.LineTo(l.x.at(a.X[i]), l.y.at(a.Lower[i]))
-	}
+	trace(r, placed(l, a.X, a.Upper), true)
+	lower := placed(l, a.X, a.Lower)
+	slices.Reverse(lower)
+	trace(r, lower, false)
 	r.Close()
 	r.Fill()
-}
-
-func step(r chart.Renderer, first bool, x, y int) {
-	if first {
-		r.MoveTo(x, y)
-		return
-	}
-	r.LineTo(x, y)
 }
 
 func line(r chart.Renderer, l layout, c Line) {
@@ -93,10 +84,56 @@ func line(r chart.Renderer, l layout, c Line) {
 		class += " thin"
 	}
 	r.SetClassName(class)
-	for i := range c.X {
-		step(r, i == 0, l.x.at(c.X[i]), l.y.at(c.Y[i]))
-	}
+	trace(r, placed(l, c.X, c.Y), true)
 	r.Stroke()
+}
+
+// spot is a place in units.
+type spot struct{ x, y int }
+
+func placed(l layout, x, y []float64) []spot {
+	list := make([]spot, len(x))
+	for i := range x {
+		list[i] = spot{l.x.at(x[i]), l.y.at(y[i])}
+	}
+	return list
+}
+
+// reach is how many points one straight stroke may stand for at most.
+const reach = 16
+
+// trace draws through the spots, leaving out those that lie on the stroke from
+// one kept spot to the next: nobody sees a tenth of a px, and a smooth curve
+// is then a third as long to write. The first and the last are always kept.
+func trace(r chart.Renderer, list []spot, begin bool) {
+	if begin {
+		r.MoveTo(list[0].x, list[0].y)
+	} else {
+		r.LineTo(list[0].x, list[0].y)
+	}
+	for i := 0; i < len(list)-1; {
+		next := i + 1
+		for next+1 < len(list) && next+1-i <= reach && straight(list[i:next+2]) {
+			next++
+		}
+		r.LineTo(list[next].x, list[next].y)
+		i = next
+	}
+}
+
+// straight tells whether all spots lie within one unit of the stroke from the
+// first to the last.
+func straight(list []spot) bool {
+	a, b := list[0], list[len(list)-1]
+	dx, dy := b.x-a.x, b.y-a.y
+	length := dx*dx + dy*dy
+	for _, p := range list[1 : len(list)-1] {
+		off := dx*(p.y-a.y) - dy*(p.x-a.x)
+		if off*off > length {
+			return false
+		}
+	}
+	return true
 }
 
 func mark(r chart.Renderer, l layout, m Mark) {

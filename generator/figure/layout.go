@@ -1,6 +1,7 @@
 package figure
 
 import (
+	"fmt"
 	"math"
 	"sort"
 	"strconv"
@@ -34,6 +35,12 @@ type axis struct {
 func (a axis) at(v float64) int {
 	t := (v - a.lo) / (a.hi - a.lo)
 	return a.from + int(math.Round(float64(t*float64(a.to-a.from))))
+}
+
+// scale tells the browser where data lie: lowest and highest value and their
+// places in units, of the x axis and then of the y axis.
+func (l layout) scale() string {
+	return fmt.Sprintf("%.9g %.9g %d %d %.9g %.9g %d %d", l.x.lo, l.x.hi, l.x.from, l.x.to, l.y.lo, l.y.hi, l.y.from, l.y.to)
 }
 
 // layout is everything the drawing needs to know of its places.

@@ -17,6 +17,7 @@ type svgRenderer struct {
 	b             *bytes.Buffer
 	f             *Figure
 	width, height int
+	scale         string // of both axes, for the browser's crosshair
 	class         string
 	path          []byte
 	x, y          int // where the path stands
@@ -36,6 +37,7 @@ func (r *svgRenderer) begin() {
 	escape(w, r.f.ID)
 	w.WriteString(`-desc" viewBox="0 0 `)
 	w.WriteString(strconv.Itoa(r.width) + " " + strconv.Itoa(r.height))
+	w.WriteString(`" data-scale="` + r.scale)
 	w.WriteString(`"><title id="`)
 	escape(w, r.f.ID)
 	w.WriteString(`-title">`)

@@ -129,13 +129,16 @@ func (r row) spellings(k Kind) []string {
 }
 
 // replacer folds the spellings of one thing into one.
-var replacer = strings.NewReplacer(
+var replacer = strings.NewReplacer(folds...)
+
+// folds are the pairs of replacer; the browser's reader gets them too.
+var folds = []string{
 	"\u00b5", "u", "\u03bc", "u", "\u03a9", "ohm", "\u2126", "ohm", // µ and Ω, two code points each
 	"\u00b0", "deg", "\u00ba", "deg", "\u02da", "deg", "℃", "degC", "℉", "degF", // °, º and ˚
 	"□", "sq", "◻", "sq", "\u0394", "delta", "\u2206", "delta", // Δ, two code points
 	"·", "*", "⋅", "*", "×", "*", ".", "*", "²", "^2", "³", "^3", "⁴", "^4", "⁻¹", "^-1", "⁻²", "^-2", "⁻³", "^-3", "⁻⁴", "^-4", "⁻⁸", "^-8", "⁻⁶", "^-6",
 	" ", "", "\t", "", "\u00a0", "", "\u202f", "", "\u2009", "", "**", "^", "−", "-", "ohms", "ohm", "Ohm", "ohm", "OHM", "ohm",
-)
+}
 
 // normalise folds a spelling: ASCII letters, * as product, ^ as power, no
 // blanks; a product sign between letters is dropped, so that "uohm cm",
@@ -143,8 +146,11 @@ var replacer = strings.NewReplacer(
 func normalise(s string) string {
 	s = replacer.Replace(s)
 	s = strings.ReplaceAll(s, "*", "")
-	for _, p := range [...][2]string{{"^2", "2"}, {"^3", "3"}, {"^4", "4"}, {"deltadeg", "delta"}, {"degK", "K"}} {
+	for _, p := range lastFolds {
 		s = strings.ReplaceAll(s, p[0], p[1])
 	}
 	return s
 }
+
+// lastFolds are made one after the other, after folds.
+var lastFolds = [][2]string{{"^2", "2"}, {"^3", "3"}, {"^4", "4"}, {"deltadeg", "delta"}, {"degK", "K"}}

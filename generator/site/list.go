@@ -1,8 +1,6 @@
 package site
 
 import (
-	"bytes"
-	"encoding/json"
 	"math"
 	"sort"
 	"strconv"
@@ -12,6 +10,7 @@ import (
 	"ohmfolio/generator/material"
 	"ohmfolio/generator/output"
 	"ohmfolio/generator/quantity"
+	"ohmfolio/generator/study"
 )
 
 // listRow is one material in the lists. The Value fields are for sorting, ""
@@ -120,6 +119,7 @@ type materialsPage struct {
 	Families []string
 	Unit     string
 	Reports  []link
+	Cautions cautionList
 }
 
 func (s *site) rows() []listRow {
@@ -137,72 +137,39 @@ func (s *site) unit() string {
 
 func (s *site) materials() output.Output {
 	return s.page("materials.html", "materials-page", func() any {
-		p := materialsPage{frame: s.frame("Materials", "list", "", "materials.html", "list.js", "evaluate.js", "materials.js"), Rows: s.rows(), Unit: s.unit()}
-		seen := map[string]bool{}
-		for _, r := range p.Rows {
-			if r.Family != "not stated" && !seen[r.Family] {
-				seen[r.Family] = true
-				p.Families = append(p.Families, r.Family)
-			}
-		}
-		sort.Strings(p.Families)
+		p := materialsPage{frame: s.frame("Materials", "list", "", "materials.html", "list.js", "reading.js", "evaluate.js", "materials.js"), Rows: s.rows(), Unit: s.unit()}
+		p.Families = familiesOf(p.Rows)
 		return p
 	})
 }
 
 func (s *site) sideBySide() output.Output {
 	return s.page("side-by-side.html", "side-by-side-page", func() any {
-		return materialsPage{frame: s.frame("Side by side", "beside", "", "side-by-side.html", "beside.js"), Rows: s.rows(), Unit: s.unit(), Reports: s.pages("reports")}
+		p := materialsPage{frame: s.frame("Side by side", "beside", "", "side-by-side.html", "list.js", "reading.js", "beside.js"), Rows: s.rows(), Unit: s.unit(), Reports: s.pages("reports"),
+			Cautions: cautionList{"cautions", study.SheetCautions()}}
+		p.Families = familiesOf(p.Rows)
+		return p
 	})
 }
 
-// listed is one material in the data script of the list.
-type listed struct {
-	ID     string       `json:"id"`
-	Family string       `json:"family"`
-	Status string       `json:"status"`
-	Words  string       `json:"words"`
-	Rho    *float64     `json:"rho"`   // at 20 °C in the house unit
-	Ratio  [][7]float64 `json:"ratio"` // segments of R/R_ref in kelvin
+func (s *site) firstShunt() output.Output {
+	return s.page("first-shunt.html", "first-shunt-page", func() any {
+		return materialsPage{frame: s.frame("First shunt", "shunt-page", "", "", "list.js", "reading.js", "first-shunt.js"), Families: familiesOf(s.rows()), Cautions: cautionList{"cautions", study.ShuntCautions()}}
+	})
 }
 
-// listScript is the data of the list as a script: pages opened as files may
-// not fetch their neighbours.
-func (s *site) listScript() []byte {
-	list := []listed{}
-	for _, r := range s.in.Library.Materials {
-		list = append(list, s.listedOf(r))
-	}
-	text, err := json.Marshal(list) // escapes <, > and &, so no text can end the script
-	if err != nil {
-		panic(err) // numbers are finite and texts are texts
-	}
-	var b bytes.Buffer
-	b.WriteString("\"use strict\";\nvar listed = ")
-	b.Write(text)
-	b.WriteString(";\n")
-	return b.Bytes()
-}
-
-func (s *site) listedOf(r *material.Record) listed {
-	set := r.Adopted
-	l := listed{ID: r.ID, Family: string(r.Family), Status: string(r.Status), Words: findWords(r)}
-	if set == nil {
-		return l
-	}
-	if v, ok := (material.Reading{Told: set.Rho}).At(twenty); ok {
-		x := quantity.Round12(s.units.Resistivity.FromSI(v))
-		l.Rho = &x
-	}
-	if set.Ratio.HasNominal() && set.Valid.Hi > set.Valid.Lo {
-		for _, g := range set.Ratio.Nominal.Segments {
-			l.Ratio = append(l.Ratio, [7]float64{g.From, g.To, g.Centre, round12(g.C[0]), round12(g.C[1]), round12(g.C[2]), round12(g.C[3])})
+func familiesOf(rows []listRow) []string {
+	var list []string
+	seen := map[string]bool{}
+	for _, r := range rows {
+		if r.Family != "not stated" && !seen[r.Family] {
+			seen[r.Family] = true
+			list = append(list, r.Family)
 		}
 	}
-	return l
+	sort.Strings(list)
+	return list
 }
-
-func round12(x float64) float64 { return quantity.Round12(x) }
 
 // findWords is what the text field looks through: lower case.
 func findWords(r *material.Record) string {

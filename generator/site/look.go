@@ -7,11 +7,15 @@ import (
 	"fmt"
 	"html/template"
 	"io/fs"
+	"maps"
 	"path"
+	"regexp"
+	"slices"
 	"strings"
 
 	"ohmfolio/generator/figure"
 	"ohmfolio/generator/output"
+	"ohmfolio/generator/quantity"
 )
 
 // look is the theme, ready to use: templates compiled once, style and scripts
@@ -19,15 +23,41 @@ import (
 type look struct {
 	templates *template.Template
 	style     string
+	pages     string // style of what material pages do not need
 	mark      string
 	scripts   map[string]string // "tables.js" → "tables.1f2e….js"
 	files     []output.Output
 }
 
 var templateNames = []string{"frame", "home-page", "materials-page", "material-page", "sheet-page", "report-page", "guide-page",
-	"sources-page", "words-page", "decisions-page", "review-page", "side-by-side-page", "editions-page", "changes-page", "study-part", "study-page", "check-page"}
+	"sources-page", "words-page", "decisions-page", "review-page", "side-by-side-page", "first-shunt-page", "editions-page", "changes-page", "study-part", "study-page", "check-page"}
 
-func loadLook(theme fs.FS, list, copies []byte) (*look, error) {
+// scripts are the files of the look that pages load. Several sources in one
+// file are loaded together; the name of a file that the program writes stands
+// among them by its own name, "unit-table".
+var scripts = []struct {
+	name    string
+	sources []string
+}{
+	{"begin.js", []string{"begin.js"}},
+	{"tables.js", []string{"tables.js"}},
+	{"evaluate.js", []string{"evaluate.js"}},
+	{"materials.js", []string{"materials.js"}},
+	{"review.js", []string{"review.js"}},
+	{"check.js", []string{"check.js"}},
+	{"reading.js", []string{unitTable, "quantity.js", "numbers.js", "preference.js", "parts.js"}},
+	{"prefer.js", []string{"prefer.js"}},
+	{"find.js", []string{"find.js"}},
+	{"ask.js", []string{"evaluate.js", "value.js", "piece.js", "delivery.js", "crosshair.js"}},
+	{"beside.js", []string{"evaluate.js", "drawing.js", "shortening.js", "measures.js", "supplier.js", "address.js", "copies.js", "beside.js"}},
+	{"first-shunt.js", []string{"evaluate.js", "first-shunt.js"}},
+}
+
+// unitTable is the script that the program writes from its own units.
+const unitTable = "unit-table"
+
+// loadLook takes the theme and the data scripts by name.
+func loadLook(theme fs.FS, data map[string][]byte) (*look, error) {
 	l := &look{scripts: map[string]string{}, templates: template.New("").Funcs(helpers)}
 	for _, name := range templateNames {
 		text, err := fs.ReadFile(theme, name+".tmpl")
@@ -43,21 +73,64 @@ func loadLook(theme fs.FS, list, copies []byte) (*look, error) {
 		return nil, err
 	}
 	l.style = l.add("style.css", style)
+	pages, err := joined(theme, "pages.css")
+	if err != nil {
+		return nil, err
+	}
+	l.pages = l.add("pages.css", pages)
 	mark, err := fs.ReadFile(theme, "mark.svg")
 	if err != nil {
 		return nil, err
 	}
 	l.mark = l.add("mark.svg", mark)
-	for _, name := range []string{"tables.js", "evaluate.js", "materials.js", "review.js", "beside.js", "check.js"} {
+	units, err := quantity.Script()
+	if err != nil {
+		return nil, err
+	}
+	for _, file := range scripts {
+		text, err := assembled(theme, file.sources, units)
+		if err != nil {
+			return nil, err
+		}
+		l.scripts[file.name] = l.add(file.name, text)
+	}
+	for _, name := range slices.Sorted(maps.Keys(data)) {
+		l.scripts[name] = l.add("data/"+name, data[name])
+	}
+	return l, nil
+}
+
+// assembled joins the sources of one script.
+func assembled(theme fs.FS, sources []string, units []byte) ([]byte, error) {
+	var b bytes.Buffer
+	for _, name := range sources {
+		if name == unitTable {
+			b.WriteString("\"use strict\";\nvar unitTable = ")
+			b.Write(units)
+			b.WriteString(";\n")
+			continue
+		}
 		text, err := fs.ReadFile(theme, name)
 		if err != nil {
 			return nil, err
 		}
-		l.scripts[name] = l.add(name, text)
+		b.Write(slim(text))
 	}
-	l.scripts["list.js"] = l.add("data/list.js", list)
-	l.scripts["check-data.js"] = l.add("data/check.js", copies)
-	return l, nil
+	return b.Bytes(), nil
+}
+
+// slim leaves out what only a reader of the source needs: lines that are
+// nothing but a comment, and indentation. No source of a theme may begin a
+// line of a text with two slashes.
+func slim(text []byte) []byte {
+	var b bytes.Buffer
+	for line := range bytes.Lines(text) {
+		line = bytes.TrimLeft(line, " \t")
+		if !bytes.HasPrefix(line, []byte("//")) && len(bytes.TrimSpace(line)) > 0 {
+			b.Write(line)
+		}
+	}
+	return b.Bytes()
 }
 
 func joined(theme fs.FS, names ...string) ([]byte, error) {
@@ -67,9 +140,24 @@ func joined(theme fs.FS, names ...string) ([]byte, error) {
 		if err != nil {
 			return nil, err
 		}
-		b.Write(text)
+		b.Write(squeezed(text))
 	}
 	return b.Bytes(), nil
+}
+
+var (
+	styleComment = regexp.MustCompile(`(?s)/\*.*?\*/`)
+	styleColon   = regexp.MustCompile(`([{;][a-z0-9-]+): `)
+	styleBlank   = regexp.MustCompile(`\s*([{};,]|\n)\s*`)
+)
+
+// squeezed leaves out of a style sheet what only a reader of the source needs:
+// comments, and blanks beside braces, semicolons, commas and colons. No text in a
+// style sheet of a theme may hold one of these.
+func squeezed(text []byte) []byte {
+	text = styleComment.ReplaceAll(text, nil)
+	text = styleBlank.ReplaceAll(text, []byte("$1"))
+	return append(bytes.TrimSpace(styleColon.ReplaceAll(text, []byte("$1:"))), '\n')
 }
 
 // add keeps a file under a name with the hash of its content, so that a page

@@ -17,6 +17,7 @@ type materialPage struct {
 	Replacement *link
 	Contents    []contentsItem
 	BandWords   string
+	AskScripts  string // loaded when the reader asks a value
 	Cautions    cautionList
 	History     []historyRow
 	Copy        copyMark // of the sheet
@@ -57,6 +58,7 @@ func (s *site) materialPair(r *material.Record) (page, sheet output.Output) {
 		if s.in.Files != nil {
 			p.Files = s.in.Files(r)
 		}
+		p.AskScripts = s.scripts("../", "reading.js") + " ../data/" + r.ID + ".js " + s.scripts("../", "ask.js")
 		return p
 	})
 	sheet = s.page("sheet/"+r.ID+".html", "sheet-page", func() any {
@@ -102,6 +104,7 @@ func materialContents(st *statement.Statement) []contentsItem {
 			list = append(list, contentsItem{id, text})
 		}
 	}
+	add(true, "ask", "Ask")
 	add(st.RhoFigure != nil || st.RatioFigure != nil, "curves", "Curves")
 	add(len(st.Values.Rows) > 0, "values", "Values")
 	add(len(st.Constants.Rows) > 0, "constants", "Constants")

@@ -6,6 +6,7 @@ import (
 	"bytes"
 	"fmt"
 	"io/fs"
+	"strings"
 
 	"ohmfolio/generator/changes"
 	"ohmfolio/generator/library"
@@ -43,15 +44,16 @@ type File struct{ For, Path, Refused string }
 func Outputs(in *Input) ([]output.Output, error) {
 	s := &site{in: in, units: statement.UnitsOf(in.Library)}
 	var err error
-	if s.look, err = loadLook(in.Theme, s.listScript(), s.checkScript()); err != nil {
+	data := map[string][]byte{"list.js": s.listScript(), "find-index.js": s.findScript(), "check-data.js": s.checkScript()}
+	if s.look, err = loadLook(in.Theme, data); err != nil {
 		return nil, err
 	}
 	s.used = usedBy(in)
 	list := s.look.outputs()
-	list = append(list, s.home(), s.materials(), s.sideBySide(), s.sources(), s.words(), s.decisions(), s.review(), s.editions(), s.changes(), s.check())
+	list = append(list, s.home(), s.materials(), s.sideBySide(), s.firstShunt(), s.sources(), s.words(), s.decisions(), s.review(), s.editions(), s.changes(), s.check())
 	for _, r := range in.Library.Materials {
 		page, sheet := s.materialPair(r)
-		list = append(list, page, sheet)
+		list = append(list, page, sheet, s.heldScript(r))
 	}
 	for _, d := range in.Library.Documents {
 		if d.Room != "" {
@@ -75,9 +77,13 @@ type frame struct {
 	Title     string
 	Kind      string // class of the body
 	Root      string // "" or "../"
-	Style     string
+	Styles    []string
 	Mark      string
+	Begin     string // the script that runs before anything is drawn
 	Scripts   []string
+	Find      string // scripts of the field in the header, with spaces between
+	ReadIn    string // scripts of the reader's units
+	HouseUnit string
 	Menu      []menuItem
 	Reference library.Settings
 }
@@ -100,16 +106,29 @@ type cautionList struct {
 }
 
 func (s *site) frame(title, kind, root, here string, scripts ...string) frame {
-	f := frame{Title: title, Kind: kind, Root: root, Style: s.look.style, Mark: s.look.mark, Reference: s.in.Library.Settings}
-	for _, name := range append(scripts, "tables.js") {
+	f := frame{Title: title, Kind: kind, Root: root, Styles: []string{s.look.style}, Mark: s.look.mark, Begin: s.look.scripts["begin.js"], Reference: s.in.Library.Settings}
+	if kind != "material" {
+		f.Styles = append(f.Styles, s.look.pages)
+	}
+	for _, name := range append([]string{"tables.js"}, scripts...) {
 		f.Scripts = append(f.Scripts, s.look.scripts[name])
 	}
+	f.Find, f.ReadIn, f.HouseUnit = s.scripts(root, "find-index.js", "find.js"), s.scripts(root, "reading.js", "prefer.js"), s.unit()
 	for _, m := range []menuItem{{"Materials", "materials.html", false}, {"Side by side", "side-by-side.html", false},
 		{"Decisions", "decisions.html", false}, {"Sources", "sources.html", false}, {"How to read", s.howToRead(), false}} {
 		m.Here = m.Path == here
 		f.Menu = append(f.Menu, m)
 	}
 	return f
+}
+
+// scripts names scripts that a part loads when it is touched.
+func (s *site) scripts(root string, names ...string) string {
+	paths := make([]string, len(names))
+	for i, name := range names {
+		paths[i] = root + s.look.scripts[name]
+	}
+	return strings.Join(paths, " ")
 }
 
 // howToRead is the first guide, or the words page where there is none.

@@ -7,9 +7,9 @@ import (
 	"ohmfolio/generator/quantity"
 )
 
-// curvePoints is how many points a printed curve has: at 640 px a step is
+// curvePoints is how many points a printed curve has: at 480 px a step is
 // under four pixels, below what an eye sees of a smooth curve.
-const curvePoints = 190
+const curvePoints = 121
 
 // Two figures stand beside each other on a page and on a sheet.
 const figureWidth, figureHeight = 480, 300

@@ -16,5 +16,10 @@ const (
 // comparisonCautions go with every comparison that someone may choose a part by.
 var comparisonCautions = []string{CautionNotApproval, CautionHot, CautionIsolate, CautionProtective, CautionCodes}
 
+// ShuntCautions go with a shunt that is sized in the browser.
+func ShuntCautions() []string {
+	return []string{CautionNotApproval, CautionHot, CautionBattery, CautionIsolate, CautionProtective, CautionCodes}
+}
+
 // SheetCautions go with every sheet and with the page of decisions.
 func SheetCautions() []string { return append([]string{}, comparisonCautions...) }
