@@ -58,8 +58,16 @@ func (s *site) topic(t topics.Topic) output.Output {
 func partTable(p topics.Part) template.HTML {
 	var t tableWriter
 	t.begin("", p.Heads, nil)
-	for _, row := range p.Rows {
-		t.row(row, "")
+	for _, row := range p.Rows { // all text: 1e-8 ohm m is a spelling, no number to stand on the right
+		tag := `th scope="row"`
+		t.b.WriteString("<tr>")
+		for _, c := range row {
+			t.b.WriteString("<" + tag + wideClass(c) + ">")
+			t.text(c)
+			t.b.WriteString("</" + tag[:2] + ">")
+			tag = "td"
+		}
+		t.b.WriteString("</tr>\n")
 	}
 	return t.end(nil)
 }
