@@ -2,9 +2,11 @@ package transcribe
 
 import (
 	"fmt"
+	"math"
 
 	"ohmfolio/generator/columns"
 	"ohmfolio/generator/place"
+	"ohmfolio/generator/quantity"
 )
 
 // fill takes the cells of a row into the draft, in the order of targets.
@@ -57,12 +59,23 @@ func (r *run) fillEvery(d *draft, row []cell, t *target) {
 }
 
 func (d *draft) live(key string) bool {
+	return d.text(key) != ""
+}
+
+// text is the value of a live key, "" when there is none.
+func (d *draft) text(key string) string {
 	for _, l := range d.lines {
 		if l.key == key && l.doubt == "" {
-			return true
+			return l.value
 		}
 	}
-	return false
+	return ""
+}
+
+func sameTemperature(a, b string) bool {
+	x, p := quantity.Parse(quantity.Temperature, a)
+	y, problem := quantity.Parse(quantity.Temperature, b)
+	return p == nil && problem == nil && math.Abs(x.Value-y.Value) < 1e-9
 }
 
 // fillSource cites the source of the whole table, or the row's own.
@@ -110,6 +123,9 @@ func (r *run) fillReference(d *draft, row []cell, t *target) {
 			return
 		}
 		text = c.reference
+	}
+	if own := d.text(t.key); own != "" && text != "" && !sameTemperature(own, text) {
+		r.warn("table-cell", row[0], "the row says "+own+" and a head says "+text+"; the row counts", "correct the head or the cell")
 	}
 	if text != "" && !d.live(t.key) {
 		d.lines = append(d.lines, line{target: t, key: t.key, value: text, cell: cell{text, row[0].at}})

@@ -75,8 +75,8 @@ func TestNastyCells(t *testing.T) {
 	for column := range good {
 		for i, text := range nasty {
 			for _, mode := range []func(*Options){nil, comma} {
-				if mode != nil && match(heads[column]).unit == "" {
-					continue // the flag is about numbers
+				if mode != nil && (match(heads[column]).unit == "" || (i+column)%3 > 0) {
+					continue // the flag is about numbers; a third of the texts is enough for each
 				}
 				cells := append([]string{}, good...)
 				cells[column] = text

@@ -181,6 +181,7 @@ func TestFindings(t *testing.T) {
 		{"Name,Resistivity [µΩ·cm],Tref\n,1,20 °C\n", "table-name:2:1", nil},
 		{"Name,Resistivity [µΩ·cm],Tref\nnul,1,20 °C\n铜,1,20 °C\n", "table-name:2:1 table-name:3:1", nil},
 		{"Name,Resistivity [µΩ·cm] at 20 °C,TCR at 25 °C [ppm/K]\nA,1,1\n", "table-row:2:1 table-cell:2:5", nil},
+		{"Name,Resistivity [µΩ·cm] at 20 °C,Tref\nA,1,25 °C\nB,1,68 °F\n", "table-cell:2:1", nil},
 		{"Name,Family,Resistivity [µΩ·cm],Tref\nA,shiny,1,20 °C\n", "table-cell:2:3", nil},
 		{"a,b\n1,2\n", "table-head:1:1", nil},
 		{"", "table-head:1:1", nil},
