@@ -221,5 +221,8 @@ func Quote(s string) string {
 	return "“" + s + "”"
 }
 
+// Split splits a cell of a head into name and unit.
+func Split(cell string) Cell { return split(cell) }
+
 // Head is the name in a cell that may be one of a head.
 func Head(cell string) string { return split(cell).Name }

@@ -59,26 +59,29 @@ func Run(args []string, stdout, stderr io.Writer) int {
 type session struct {
 	out, err io.Writer
 	folder   string // --folder
+	quiet    bool   // publish says nothing but errors
 }
 
 const about = `ohmfolio turns a folder of material records into a reference: a site of
 material pages, comparison reports and printable sheets.
 
 A reference is a folder with materials/ (one YAML record a material) and
-content/ (the words). Temperatures in flags may be negative: --at "-40 °C".`
+content/ (the words). Temperatures in flags may be negative: --at "-40 °C".
+
+ohmfolio help TOPIC tells about units, record, studies or findings.`
 
 func (s *session) root() *cobra.Command {
 	root := &cobra.Command{
 		Use: "ohmfolio", Short: "A reference of resistivity and temperature coefficients", Long: about,
 		Example:       `  ohmfolio publish --folder . --into public`,
 		SilenceErrors: true, SilenceUsage: true,
-		CompletionOptions: cobra.CompletionOptions{HiddenDefaultCmd: true},
+		CompletionOptions: cobra.CompletionOptions{DisableDefaultCmd: true},
 	}
 	root.SetHelpTemplate(helpTemplate)
 	root.SetUsageTemplate(helpTemplate)
 	root.PersistentFlags().StringVar(&s.folder, "folder", ".", "folder that holds materials/ and content/")
-	root.SetHelpCommand(&cobra.Command{Hidden: true, Use: "no-help"})
-	root.AddCommand(s.publish(), s.examine(), s.value(), s.tcr(), s.fit(), s.study(), s.export(), s.changes())
+	root.SetHelpCommand(s.help(root))
+	root.AddCommand(s.publish(), s.examine(), s.value(), s.tcr(), s.fit(), s.study(), s.export(), s.changes(), s.transcribe(), s.start(), s.version(), completion())
 	root.SetFlagErrorFunc(func(c *cobra.Command, err error) error {
 		return fmt.Errorf("%w; see ohmfolio %s --help", err, c.Name())
 	})

@@ -2,6 +2,7 @@ package command
 
 import (
 	"io/fs"
+	"maps"
 	"os"
 	"path"
 	"path/filepath"
@@ -113,6 +114,16 @@ const offers = "material,supplier,form,size,price,currency,per,quantity,date,val
 	"copper,Nobody and Daughters,wire,1 mm,97531.24,EUR,kg,25 kg,2026-09-21,2026-12-31,included,3.1,,a dear one\n" +
 	"copper,Nobody and Daughters,wire,2 mm,86420.13,,kg,25 kg,,,included,3.1,,neither dated nor in a currency\n"
 
+// withoutTopics leaves out the pages that the program makes from its own lists:
+// they name the currencies and files that any reference may have.
+func withoutTopics(texts map[string]string) map[string]string {
+	rest := maps.Clone(texts)
+	for _, topic := range allTopics() {
+		delete(rest, "guide/"+topic.Name+".html")
+	}
+	return rest
+}
+
 // TestWithoutOffers: with them price and supplier stand on the site; without them
 // neither a price nor a supplier nor a finding about them is left in any file,
 // and offers that cannot be read stop nobody.
@@ -121,7 +132,7 @@ func TestWithoutOffers(t *testing.T) {
 		"content/reports/cost.md": "# Cost\n\n```study: cost\nmaterials: [copper]\nbaseline: copper\nheld: length\n```\n"}
 	dir := reference(t, files)
 	count := func(texts map[string]string) (n int) {
-		for _, text := range texts {
+		for _, text := range withoutTopics(texts) {
 			for _, word := range []string{"Nobody and Daughters", "97531", "86420", "a dear one", "offers.csv"} {
 				n += strings.Count(text, word)
 			}
@@ -136,7 +147,7 @@ func TestWithoutOffers(t *testing.T) {
 	}
 	for want, args := range map[string][]string{"with": {"publish", "--folder", "../.."}, "without": {"publish", "--folder", "../..", "--without", "offers"}} {
 		n := 0
-		for _, text := range writtenSite(t, args...) {
+		for _, text := range withoutTopics(writtenSite(t, args...)) {
 			n += strings.Count(text, "EUR") + strings.Count(text, "USD")
 		}
 		if (want == "with") != (n > 0) {

@@ -53,6 +53,7 @@ also frozen under that name in materials/editions, which the keeper commits.`,
 	c.Flags().StringVar(&f.report, "report", "", "file for a report in JSON")
 	c.Flags().StringVar(&f.archive, "archive", "", "file for the whole site as one archive too: site.zip")
 	c.Flags().StringVar(&f.edition, "edition", "", "name of an edition to freeze, such as 2026-06")
+	c.Flags().BoolVar(&s.quiet, "quiet", false, "say nothing but errors")
 	return c
 }
 
@@ -102,7 +103,11 @@ func (s *session) runPublish(f publishFlags) error {
 	}
 	outcomes, findings := examineAll(lib, "")
 	rep := reportJSON{Findings: examine.JSON(findings).Findings, Failing: failing(outcomes, before(f.into))}
-	s.printFindings(findings)
+	if s.quiet {
+		s.printFindings(onlyErrors(findings))
+	} else {
+		s.printFindings(findings)
+	}
 	if n := place.Count(findings, place.Error); n > 0 {
 		fmt.Fprintf(s.err, "nothing is written: %s\n", plural(n, "error"))
 		return joinError(errShown, writeReport(f.report, rep, start))
@@ -121,6 +126,9 @@ func (s *session) runPublish(f publishFlags) error {
 	}
 	if len(rep.Failing) > 0 {
 		return wrong("the site is written; %s not hold: %s", plural(len(rep.Failing), "binding verdict")+" does", failingText(rep.Failing))
+	}
+	if s.quiet {
+		return nil
 	}
 	fmt.Fprintf(s.out, "%s, %s, %d written, %.1f s: %s\n", plural(len(lib.Materials), "material"), plural(result.Files, "file"),
 		result.Written, time.Since(start).Seconds(), filepath.ToSlash(filepath.Join(f.into, "index.html")))
@@ -208,7 +216,7 @@ func (s *session) write(lib *library.Library, outcomes []examine.Judged, finding
 
 // Outputs joins the pages and the data files of a reference.
 func Outputs(lib *library.Library, outcomes []examine.Judged, findings []place.Finding, theme fs.FS) ([]output.Output, error) {
-	in := &site.Input{Library: lib, Outcomes: byDocument(outcomes), Findings: findings, Theme: theme}
+	in := &site.Input{Library: lib, Outcomes: byDocument(outcomes), Findings: findings, Theme: theme, Topics: allTopics()}
 	now := changes.Freeze(lib, in.Outcomes, "")
 	addHistory(in, lib, now)
 	in.Statement = func(r *material.Record) *statement.Statement { return statement.Of(lib, r) }
@@ -284,7 +292,7 @@ func (o overlay) Open(name string) (fs.File, error) {
 // progress prints a line that counts, on a terminal and after the first
 // second only.
 func (s *session) progress() func(done, total int) {
-	if !terminal(s.err) {
+	if s.quiet || !terminal(s.err) {
 		return nil
 	}
 	start, last := time.Now(), time.Time{}

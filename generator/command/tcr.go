@@ -17,8 +17,9 @@ func (s *session) tcr() *cobra.Command {
 		Long: `Tells slope, chords, box and change of the resistance of a fixed body over a
 window about a reference temperature. Each measure is named: figures of
 different measures must not be compared.`,
-		Example: `  ohmfolio tcr cumn12ni --window "20 °C to 60 °C" --reference "20 °C"`,
-		Args:    exactArgs(1, "a material: cumn12ni"),
+		Example:           `  ohmfolio tcr cumn12ni --window "20 °C to 60 °C" --reference "20 °C"`,
+		Args:              exactArgs(1, "a material: cumn12ni"),
+		ValidArgsFunction: s.completeID,
 		RunE: func(_ *cobra.Command, args []string) error {
 			return s.runTCR(args[0], window, reference, data, format)
 		},

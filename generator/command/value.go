@@ -23,9 +23,10 @@ func (s *session) value() *cobra.Command {
 		Long: `Tells resistivity, conductivity or resistance-ratio, which is R(T)/R(reference)
 of a fixed body, with everything that belongs to the number. Outside the valid
 range there is no number, unless --extrapolate asks for a guess by the formula.`,
-		Example: `  ohmfolio value copper-annealed resistivity --at "85 °C"`,
-		Args:    exactArgs(2, "a material and a quantity: copper-annealed resistivity"),
-		RunE:    func(_ *cobra.Command, args []string) error { return s.runValue(args[0], args[1], f) },
+		Example:           `  ohmfolio value copper-annealed resistivity --at "85 °C"`,
+		Args:              exactArgs(2, "a material and a quantity: copper-annealed resistivity"),
+		ValidArgsFunction: s.completeID,
+		RunE:              func(_ *cobra.Command, args []string) error { return s.runValue(args[0], args[1], f) },
 	}
 	c.Flags().StringVar(&f.at, "at", "", `temperature with its unit: "85 °C", "-40 degC", "4 K"`)
 	c.Flags().StringVar(&f.reference, "reference", "", "reference temperature of a resistance ratio; the data set's own when not given")

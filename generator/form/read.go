@@ -81,7 +81,7 @@ func fits(y *yaml.Node, t Type) bool {
 }
 
 func (r *reader) wrongType(y *yaml.Node, t Type) {
-	r.add("type-wrong", r.at(y), kindOf(y)+" stands where "+t.describe()+" is needed", "write "+t.describe())
+	r.add("type-wrong", r.at(y), kindOf(y)+" stands where "+t.Describe()+" is needed", "write "+t.Describe())
 }
 
 func kindOf(y *yaml.Node) string {
@@ -97,8 +97,8 @@ func kindOf(y *yaml.Node) string {
 	return quote(y.Value)
 }
 
-// describe says in words what a type is.
-func (t Type) describe() string {
+// Describe says in words what a type is.
+func (t Type) Describe() string {
 	switch t.what {
 	case isMapping:
 		return "a mapping with the keys " + strings.Join(t.shape.Keys(), ", ")
@@ -125,7 +125,7 @@ func (t Type) describe() string {
 	case isEither:
 		var list []string
 		for _, a := range t.any {
-			list = append(list, a.describe())
+			list = append(list, a.Describe())
 		}
 		return strings.Join(list, ", or ")
 	}

@@ -86,7 +86,7 @@ func (r *reader) scalar(y *yaml.Node, t Type) *Node {
 	n := r.node(y, t.what)
 	n.text, n.converted = y.Value, true
 	if y.Value == "" {
-		r.add("value-missing", n.Position(), "no value stands here", "write "+t.describe()+", or take the key out")
+		r.add("value-missing", n.Position(), "no value stands here", "write "+t.Describe()+", or take the key out")
 		return nil
 	}
 	switch t.what {

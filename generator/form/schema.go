@@ -50,9 +50,9 @@ func schemaOf(t Type) object {
 		}
 		return object{"anyOf": list}
 	case isRange:
-		return object{"type": "string", "description": t.describe()}
+		return object{"type": "string", "description": t.Describe()}
 	}
-	return object{"type": []any{"string", "number"}, "description": t.describe()}
+	return object{"type": []any{"string", "number"}, "description": t.Describe()}
 }
 
 func words(list []string) []any {

@@ -112,3 +112,20 @@ func (s *Shape) Keys() []string {
 	}
 	return list
 }
+
+// Shapes are the mappings that stand directly in a value of type t.
+func (t Type) Shapes() []*Shape {
+	switch t.what {
+	case isMapping:
+		return []*Shape{t.shape}
+	case isList, isNamed:
+		return t.of.Shapes()
+	case isEither:
+		var list []*Shape
+		for _, a := range t.any {
+			list = append(list, a.Shapes()...)
+		}
+		return list
+	}
+	return nil
+}

@@ -53,3 +53,6 @@ func Schemas() (map[string][]byte, error) {
 	}
 	return out, nil
 }
+
+// Shapes are the forms of the files of a reference.
+func Shapes() []*form.Shape { return []*form.Shape{material.Shape(), sourceShape, settingsShape} }

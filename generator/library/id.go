@@ -8,9 +8,9 @@ import (
 
 const idMend = "use small letters, digits and hyphens, beginning with a letter or digit: cumn12ni.yaml"
 
-// plainID tells whether s is a plain ID: [a-z0-9][a-z0-9-]*, no word that the
+// PlainID tells whether s is a plain ID: [a-z0-9][a-z0-9-]*, no word that the
 // reference or Windows needs. Plain IDs cannot differ in case only.
-func plainID(s string) bool {
+func PlainID(s string) bool {
 	if s == "" || s[0] == '-' || len(s) > 100 {
 		return false
 	}
@@ -36,7 +36,7 @@ var reserved = func() map[string]bool {
 
 func (l *loader) goodID(name string) bool {
 	id := stem(name)
-	if plainID(id) {
+	if PlainID(id) {
 		return true
 	}
 	message := "the file's name is not a plain ID"

@@ -270,7 +270,7 @@ func (l *loader) readIfThere(name string) *place.Source {
 }
 
 func (l *loader) document(room string, src *place.Source) {
-	if room != "" && !plainID(stem(src.File)) {
+	if room != "" && !PlainID(stem(src.File)) {
 		l.add("id-not-plain", place.Error, src.File, "the name of the page is not plain", idMend)
 		return
 	}

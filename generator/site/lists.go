@@ -25,7 +25,7 @@ type homePage struct {
 
 func (s *site) home() output.Output {
 	return s.page("index.html", "home-page", func() any {
-		p := homePage{frame: s.frame("Home", "home", "", ""), Count: len(s.in.Library.Materials), Reports: s.pages("reports"), Guides: s.pages("guides")}
+		p := homePage{frame: s.frame("Home", "home", "", ""), Count: len(s.in.Library.Materials), Reports: s.pages("reports"), Guides: append(s.pages("guides"), s.topicLinks()...)}
 		for _, r := range s.in.Library.Materials {
 			if r.Status == material.Released {
 				p.Released++

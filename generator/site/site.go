@@ -15,6 +15,7 @@ import (
 	"ohmfolio/generator/place"
 	"ohmfolio/generator/statement"
 	"ohmfolio/generator/study"
+	"ohmfolio/generator/topics"
 )
 
 // Input is all that the pages are made of.
@@ -25,6 +26,7 @@ type Input struct {
 	Findings  []place.Finding
 	Files     func(r *material.Record) []File // for other programs; nil: none
 	Theme     fs.FS                           // templates, styles and scripts
+	Topics    []topics.Topic                  // of the guide, made from the program's lists
 	// Answer gives the current value of a live number: text, note, and
 	// whether there is one.
 	Answer func(question, written, materialID string) (text, note string, ok bool)
@@ -51,6 +53,9 @@ func Outputs(in *Input) ([]output.Output, error) {
 	s.used = usedBy(in)
 	list := s.look.outputs()
 	list = append(list, s.home(), s.materials(), s.sideBySide(), s.firstShunt(), s.sources(), s.words(), s.decisions(), s.review(), s.editions(), s.changes(), s.check())
+	for _, t := range s.topics() {
+		list = append(list, s.topic(t))
+	}
 	for _, r := range in.Library.Materials {
 		page, sheet := s.materialPair(r)
 		list = append(list, page, sheet, s.heldScript(r))

@@ -64,6 +64,8 @@ func Read(src *place.Source) (*Page, []place.Finding) {
 	if !form.CheckText(list, src) {
 		return nil, list.Findings
 	}
+	src = unixText(src)
+	list.Source = src
 	p := &Page{source: src.Text}
 	p.doc = markdown.Parser().Parse(text.NewReader(src.Text))
 	c := collector{page: p, src: src, list: list, ids: map[string]bool{}, lines: lineIndex(src.Text)}
@@ -72,6 +74,17 @@ func Read(src *place.Source) (*Page, []place.Finding) {
 		list.Add("title-missing", place.Error, src.At(src.First, 1, 1), "the page has no title", "begin it with a line such as # How to read a sheet")
 	}
 	return p, list.Findings
+}
+
+// unixText drops a byte-order mark, which Markdown does not know, and carriage
+// returns, so that a page is the same on every system. Lines and columns stay.
+func unixText(src *place.Source) *place.Source {
+	text := bytes.TrimPrefix(src.Text, []byte("\ufeff"))
+	if len(text) == len(src.Text) && bytes.IndexByte(text, '\r') < 0 {
+		return src
+	}
+	text = bytes.ReplaceAll(text, []byte("\r\n"), []byte("\n"))
+	return &place.Source{File: src.File, Text: text, First: src.First, Shift: src.Shift}
 }
 
 // markdown is the one parser; it is safe for use by several goroutines.
@@ -138,7 +151,7 @@ func (c *collector) position(offset, length int) place.Position {
 		}
 	}
 	offset = min(offset, len(c.src.Text))
-	column := utf8.RuneCount(bytes.TrimPrefix(c.src.Text[c.lines[lo]:offset], []byte("\ufeff"))) + 1
+	column := utf8.RuneCount(c.src.Text[c.lines[lo]:offset]) + 1
 	return c.src.At(lo+c.src.First, column, length)
 }
 
