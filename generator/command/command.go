@@ -81,7 +81,7 @@ func (s *session) root() *cobra.Command {
 	root.SetUsageTemplate(helpTemplate)
 	root.PersistentFlags().StringVar(&s.folder, "folder", ".", "folder that holds materials/ and content/")
 	root.SetHelpCommand(s.help(root))
-	root.AddCommand(s.publish(), s.examine(), s.value(), s.tcr(), s.fit(), s.study(), s.export(), s.changes(), s.transcribe(), s.start(), s.version(), completion())
+	root.AddCommand(s.publish(), s.examine(), s.value(), s.tcr(), s.fit(), s.study(), s.export(), s.follow(), s.changes(), s.transcribe(), s.start(), s.version(), completion())
 	root.SetFlagErrorFunc(func(c *cobra.Command, err error) error {
 		return fmt.Errorf("%w; see ohmfolio %s --help", err, c.Name())
 	})

@@ -22,6 +22,7 @@ type Library struct {
 	Findings  []place.Finding // what reading found, sorted
 
 	byID map[string]*material.Record
+	kept map[string]kept // by file, for the next reading
 }
 
 // Settings is content/reference.yaml.

@@ -22,6 +22,29 @@ import (
 type Options struct {
 	Parallel int  // readers at once; 0 takes as many as there are processors
 	Editions bool // read the texts of materials/editions, too
+
+	// Keep lets the library be the Before of the next one: the live view reads
+	// again only what changed. A publication always reads everything.
+	Keep    bool
+	Before  *Library
+	Changed map[string]bool // files below the folder, with forward slashes
+}
+
+// kept is one record as it was read.
+type kept struct {
+	record   *material.Record
+	findings []place.Finding
+	beside   []string // CSV files that it names
+}
+
+// stands tells whether nothing that it was read from has changed.
+func (k kept) stands(name string, changed map[string]bool) bool {
+	for _, b := range k.beside {
+		if changed[b] {
+			return false
+		}
+	}
+	return !changed[name]
 }
 
 // Load reads the reference in folder. What is wrong in its files are findings
@@ -137,6 +160,7 @@ func (l *loader) records(o Options) {
 	if len(names) == 0 {
 		l.add("no-records", place.Error, "materials", "there is no record", "write materials/ID.yaml; the README shows the smallest one")
 	}
+	all := make([]kept, len(names))
 	n := o.Parallel
 	if n <= 0 {
 		n = runtime.GOMAXPROCS(0)
@@ -150,7 +174,8 @@ func (l *loader) records(o Options) {
 		go func() {
 			defer wait.Done()
 			for j := i; j < len(names); j += n {
-				records[j] = shares[i].record(names[j])
+				all[j] = shares[i].again(names[j], o)
+				records[j] = all[j].record
 			}
 		}()
 	}
@@ -158,7 +183,42 @@ func (l *loader) records(o Options) {
 	for i := range shares {
 		l.findings = append(l.findings, shares[i].findings...)
 	}
+	if o.Keep {
+		l.lib.kept = make(map[string]kept, len(names))
+		for j, name := range names {
+			l.lib.kept[name] = all[j]
+		}
+	}
 	l.index(records)
+}
+
+// again takes a record from the library before when nothing of it changed,
+// and reads it otherwise.
+func (l *loader) again(name string, o Options) kept {
+	if o.Before != nil {
+		if k, ok := o.Before.kept[name]; ok && k.stands(name, o.Changed) {
+			l.findings = append(l.findings, k.findings...)
+			return k
+		}
+	}
+	from := len(l.findings)
+	k := kept{record: l.record(name)}
+	if !o.Keep {
+		return k
+	}
+	k.findings = append([]place.Finding(nil), l.findings[from:]...)
+	if k.record == nil {
+		return k
+	}
+	if n := k.record.Node.Get("lots"); n != nil {
+		k.beside = append(k.beside, path.Join("materials", n.Text()))
+	}
+	for _, s := range k.record.Sets {
+		if s.PointsFile != "" {
+			k.beside = append(k.beside, path.Join("materials", s.PointsFile))
+		}
+	}
+	return k
 }
 
 func (l *loader) record(name string) *material.Record {
