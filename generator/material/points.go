@@ -107,9 +107,9 @@ func (s *DataSet) state(h fit.Header) {
 
 // with adds the common parts to the fit's own standard uncertainty u.
 func (f *Fitted) with(u float64, part func(BudgetLine) float64) float64 {
-	sum := u * u
+	sum := float64(u * u)
 	for _, b := range f.Budget {
-		sum += part(b) * part(b)
+		sum += float64(part(b) * part(b))
 	}
 	return math.Sqrt(sum)
 }
@@ -291,7 +291,7 @@ func (f *Fitted) uncertaintyAt(t float64, absolute bool) float64 {
 		return ratio * f.with(u/y, func(b BudgetLine) float64 { return b.Value })
 	}
 	alpha := f.with(0, func(b BudgetLine) float64 { return b.Alpha })
-	return math.Hypot(f.relativeU(t), alpha*(t-f.Result.Options.Reference))
+	return math.Hypot(f.relativeU(t), float64(alpha*(t-f.Result.Options.Reference)))
 }
 
 // Describe says in one line what the points gave.
