@@ -4,7 +4,7 @@
 "use strict";
 
 (function () {
-  var byId = Object.create(null), formerly = Object.create(null), bench = [], seen = null, cursor = null, axes = null, timer = 0, after = 0;
+  var byId = Object.create(null), formerly = Object.create(null), bench = [], seen = null, cursor = null, axes = null, timer = 0, after = 0, narrow = false;
   listed.forEach(function (m) { byId[m.id] = m; (m.formerly || []).forEach(function (old) { formerly[old] = m; }); });
   function part(id) { return document.getElementById(id); }
   var fields = { from: "window-from", to: "window-to", ref: "window-ref", show: "window-show", at: "read-at-text", less: "keep-less", rho: "keep-rho", emf: "keep-emf", service: "keep-service", family: "keep-family", supplier: "supplier" };
@@ -53,8 +53,8 @@
     p.textContent = "";
     if (list.length === 0) return;
     p.append(before + " ");
-    list.slice(0, 40).forEach(function (r, i) { p.append(i ? ", " : "", link(r.m), " ", parts.make("span", { "class": "remark" }, r.why)); });
-    p.append(list.length > 40 ? ", and " + (list.length - 40) + " more." : ".");
+    list.slice(0, 12).forEach(function (r, i) { p.append(i ? ", " : "", link(r.m), " ", parts.make("span", { "class": "remark" }, r.why)); });
+    p.append(list.length > 12 ? ", and " + (list.length - 12) + " more." : ".");
   }
 
   function shorten(q) {
@@ -109,7 +109,7 @@
   }
 
   function draw(q) {
-    var show = part(fields.show).value, svg = part("drawing"), narrow = svg.parentNode.clientWidth <= 560;
+    var show = part(fields.show).value, svg = part("drawing");
     var used = bench.map(function (id, i) {
       var m = byId[id];
       return { m: m, ink: i % 4 + 1, dash: (i + Math.floor(i / 4)) % 4 + 1, read: reader(m, q, show), band: bander(m, q, show) };
@@ -254,7 +254,7 @@
   function remember(q) {
     var hash = address.write(state(), chosen(q));
     try { history.replaceState(null, "", hash); } catch (refused) { /* some browsers refuse it for files; the field has the link */ }
-    part("link").value = location.href.split("#")[0] + hash;
+    part("link").value = part("link-printed").textContent = location.href.split("#")[0] + hash;
   }
 
   // recall sets fields and bench from an address and tells what has changed.
@@ -349,6 +349,9 @@
     });
   }
 
+  // look asks for the width once, and not while the page is being changed.
+  function look() { narrow = part("drawing").parentNode.clientWidth <= 560; }
+
   function listen() {
     var frame = 0;
     function soon() { cancelAnimationFrame(frame); frame = requestAnimationFrame(update); }
@@ -371,7 +374,7 @@
     part("copy-link").addEventListener("click", function () { part("link-told").textContent = tables.copy(part("link").value) ? "The link is copied." : "Copy the link from the field."; });
     part("print").addEventListener("click", function () { window.print(); });
     window.addEventListener("hashchange", function () { recall(); update(); });
-    window.addEventListener("resize", soon);
+    window.addEventListener("resize", function () { look(); soon(); });
   }
 
   // The first bench, when no address says otherwise: what the sentence keeps.
@@ -392,6 +395,7 @@
     addTicks();
     tick();
   }, { rootMargin: "600px" }).observe(part("beside"));
+  look();
   addNames();
   listen();
   begin();

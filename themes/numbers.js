@@ -22,7 +22,7 @@ var numbers = (function () {
     var parts = away(x).toExponential(digits - 1).split("e"), e = Number(parts[1]);
     if (e < -4 || e > 6) return parts[0].replace("-", "\u2212") + "×10" + superscript(e);
     var p = Math.pow(10, Math.max(0, e - digits + 1));
-    return fixed(p > 1 ? Math.round(x / p) * p : x, Math.max(0, digits - 1 - e));
+    return fixed(p > 1 ? Math.sign(x) * Math.round(Math.abs(x) / p) * p : x, Math.max(0, digits - 1 - e));
   }
 
   function superscript(n) {

@@ -37,7 +37,7 @@
       var y = quantity.fromSI(b, quantity.toSI(a, x));
       if (kind === "temperature") return numbers.trimmed(y, Math.max(decimals + (to === "°F" ? 1 : 2), 2));
       var place = Math.round(Math.log10(Math.pow(10, -decimals) * a.f / b.f)), p = Math.pow(10, Math.max(0, place));
-      return numbers.fixed(Math.round(y / p) * p === 0 || place < 0 ? y : Math.round(y / p) * p, Math.max(0, -place));
+      return numbers.fixed(place > 0 && Math.abs(y) >= p ? Math.sign(y) * Math.round(Math.abs(y) / p) * p : y, Math.max(0, -place));
     };
   }
 

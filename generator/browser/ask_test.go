@@ -165,3 +165,24 @@ func TestReadIn(t *testing.T) {
 		t.Errorf("the sheet has changed its units")
 	}
 }
+
+// TestReadInEverywhere: with the reader's units the interactive pages work,
+// and tell the same numbers in them.
+func TestReadInEverywhere(t *testing.T) {
+	ctx := chrome(t)
+	base := places(t)["file"]
+	keep := chromedp.Evaluate(`localStorage.setItem("read-in", JSON.stringify({temperature: "°F", resistivity: "Ω·cmil/ft"})); 1`, nil)
+	var bench, ask, shunt string
+	if err := chromedp.Run(ctx, chromedp.Navigate(base+"side-by-side.html"), keep, chromedp.Reload(), settle(), chromedp.Evaluate(`document.getElementById("content").innerText`, &bench),
+		chromedp.Navigate(base+"material/copper-annealed.html"), ready("ask-at"), typed("ask-at", "68"), chromedp.Evaluate(`document.getElementById("ask").innerText`, &ask),
+		chromedp.Navigate(base+"first-shunt.html"), settle(), chromedp.Evaluate(`document.getElementById("content").innerText`, &shunt), chromedp.Evaluate(`localStorage.clear(); 1`, nil)); err != nil {
+		t.Fatal(err)
+	}
+	// −40 °C to 85 °C are −40 °F to 185 °F; 68 °F are 20 °C, where annealed
+	// copper has 10.371 Ω·cmil/ft; 23 °C are 73.4 °F.
+	for name, c := range map[string][2]string{"bench": {bench, "from −40\u202f°F to 185\u202f°F"}, "ask": {ask, "10.371\u202fΩ·cmil/ft"}, "shunt": {shunt, "73.4\u202f°F"}} {
+		if !strings.Contains(c[0], c[1]) || nonsense(c[0]) {
+			t.Errorf("%s does not say %q: %.900q", name, c[1], c[0])
+		}
+	}
+}

@@ -140,3 +140,30 @@ func TestNonsense(t *testing.T) {
 		}
 	}
 }
+
+// TestCopies: what leaves side by side has the reader's decimal mark, plain
+// minus signs and what it rests on, and the figure is well-formed SVG.
+func TestCopies(t *testing.T) {
+	ctx := chrome(t)
+	base := places(t)["file"]
+	var csv, copied, svg string
+	var good bool
+	if err := chromedp.Run(ctx, chromedp.Navigate(base+"side-by-side.html"), chromedp.Evaluate(`localStorage.setItem("read-in", JSON.stringify({mark: ","})); 1`, nil), chromedp.Reload(), settle(),
+		chromedp.Evaluate(`copies.csv(document.querySelector("#measures table"), ["rests on this"])`, &csv), chromedp.Evaluate(`tables.asText(document.querySelector("#measures table"))`, &copied),
+		chromedp.Evaluate(`copies.picture(document.getElementById("drawing"), ["rests on this"])`, &svg),
+		chromedp.Evaluate(`new DOMParser().parseFromString(copies.picture(document.getElementById("drawing"), ["a & b"]), "image/svg+xml").querySelector("parsererror") === null`, &good),
+		chromedp.Evaluate(`localStorage.clear(); 1`, nil)); err != nil {
+		t.Fatal(err)
+	}
+	for what, text := range map[string]string{"CSV": csv, "copy": copied} {
+		if !strings.Contains(text, "43,62") || strings.Contains(text, "43.62") || strings.Contains(text, "\u2212") {
+			t.Errorf("%s: %q", what, text)
+		}
+	}
+	if !strings.Contains(csv, "rests on this") || !strings.Contains(csv, ";") {
+		t.Errorf("CSV: %q", csv)
+	}
+	if !good || !strings.Contains(svg, "rests on this") || strings.Contains(svg, "crosshair") || !strings.Contains(svg, "stroke-dasharray") {
+		t.Errorf("SVG: good %v, %.300q", good, svg)
+	}
+}

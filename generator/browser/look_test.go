@@ -25,6 +25,7 @@ func TestLook(t *testing.T) {
 
 		"shunt": {chromedp.Navigate(base + "first-shunt.html"), settle()},
 		"find":  {chromedp.Navigate(base + "index.html"), ready("find-text"), typed("find-text", "manga"), settle()},
+		"home":  {chromedp.Navigate(base + "index.html"), settle()},
 		"list":  {chromedp.Navigate(base + "materials.html"), settle()},
 	} {
 		for _, width := range []int64{1280, 390} {

@@ -3,9 +3,11 @@ package browser
 import (
 	"encoding/json"
 	"fmt"
+	"math"
 	"math/rand"
 	"os"
 	"path/filepath"
+	"strconv"
 	"strings"
 	"testing"
 
@@ -122,4 +124,58 @@ func readInBrowser(t *testing.T, table []byte, list []reading) []reading {
 		}
 	}
 	return got
+}
+
+// TestPrinterParity: the browser prints numbers as the program does, and
+// knows the same wire gauges.
+func TestPrinterParity(t *testing.T) {
+	ctx := chrome(t)
+	random := rand.New(rand.NewSource(3))
+	type printed struct {
+		X      float64
+		Digits int
+		Text   string
+		Change string
+	}
+	var list, got []printed
+	for range 3000 {
+		x := (2*random.Float64() - 1) * math.Pow(10, float64(random.Intn(14)-7))
+		if random.Intn(4) == 0 {
+			x, _ = strconv.ParseFloat(strconv.FormatFloat(x, 'g', 3, 64), 64) // halves of the last place
+		}
+		list = append(list, printed{X: x, Digits: 1 + random.Intn(8)})
+	}
+	list = append(list, printed{X: 0, Digits: 3}, printed{X: 273.15, Digits: 4}, printed{X: 0.00999999, Digits: 2}, printed{X: 1e7, Digits: 3}, printed{X: 99.95e-6, Digits: 3})
+	loadScript(t, ctx, "numbers")
+	if err := chromedp.Run(ctx, chromedp.Evaluate(js(list)+`.map(function (p) { return { X: p.X, Text: numbers.significant(p.X, p.Digits), Change: numbers.change(p.X) }; })`, &got)); err != nil {
+		t.Fatal(err)
+	}
+	for i, p := range list {
+		if want := quantity.Number(p.X, p.Digits); got[i].Text != want {
+			t.Errorf("%v with %d digits: browser %q, program %q", p.X, p.Digits, got[i].Text, want)
+		}
+		if want := quantity.ChangeText(p.X); got[i].Change != want && math.Abs(p.X) < 1e3 {
+			t.Errorf("change %v: browser %q, program %q", p.X, got[i].Change, want)
+		}
+	}
+	var gauges []float64
+	table, err := quantity.Script()
+	if err != nil {
+		t.Fatal(err)
+	}
+	script, err := os.ReadFile(filepath.Join("..", "..", "themes", "quantity.js"))
+	if err != nil {
+		t.Fatal(err)
+	}
+	if err := chromedp.Run(ctx, chromedp.Evaluate(fmt.Sprintf(`(function () { var unitTable = %s; %s; return ["AWG 0000", "4/0 AWG", "AWG 000", "AWG 00", "AWG 0", "AWG 24", "24 AWG", "AWG 56", "AWG 57", "24"].map(quantity.gauge); })()`, table, script), &gauges)); err != nil {
+		t.Fatal(err)
+	}
+	for i, n := range []int{-3, -3, -2, -1, 0, 24, 24, 56} {
+		if !within(gauges[i], quantity.AWG(n), 0) {
+			t.Errorf("AWG %d: browser %v, program %v", n, gauges[i], quantity.AWG(n))
+		}
+	}
+	if gauges[8] != 0 || gauges[9] != 0 {
+		t.Errorf("no gauges are read as %v", gauges[8:])
+	}
 }
