@@ -7,6 +7,7 @@ import (
 	"io/fs"
 	"os"
 	"path/filepath"
+	"sync"
 
 	"ohmfolio/generator/changes"
 	"ohmfolio/generator/examine"
@@ -72,8 +73,8 @@ func (s *session) keepEdition(name string, text []byte) error {
 
 // statementFiles are the present state and all editions, as the site carries
 // them.
-func statementFiles(lib *library.Library, now *changes.Statement) []output.Output {
-	list := []output.Output{{Path: "data/reference.json", Write: now.Write}}
+func statementFiles(lib *library.Library, now func() *changes.Statement) []output.Output {
+	list := []output.Output{{Path: "data/reference.json", Write: func(w *bytes.Buffer) error { return now().Write(w) }}}
 	for _, e := range lib.Editions {
 		list = append(list, output.Output{Path: "data/editions/" + e.Name + ".json", Write: func(w *bytes.Buffer) error { _, err := w.Write(e.Text); return err }})
 	}
@@ -81,16 +82,17 @@ func statementFiles(lib *library.Library, now *changes.Statement) []output.Outpu
 }
 
 // addHistory lets the pages tell what the editions said.
-func addHistory(in *site.Input, lib *library.Library, now *changes.Statement) {
+func addHistory(in *site.Input, lib *library.Library, now func() *changes.Statement) {
 	editions, _ := changes.Editions(lib) // what is wrong in them has been told
-	all := append(append([]*changes.Statement{}, editions...), now)
+	all := sync.OnceValue(func() []*changes.Statement { return append(append([]*changes.Statement{}, editions...), now()) })
+	in.HasEditions = len(editions) > 0
 	in.Editions = func() []changes.Row { return changes.Rows(editions) }
-	in.History = func(id string) []changes.Entry { return changes.History(all, id) }
+	in.History = func(id string) []changes.Entry { return changes.History(all(), id) }
 	in.Changes = func() *changes.Report {
 		if len(editions) == 0 {
 			return nil
 		}
 		last := editions[len(editions)-1]
-		return changes.Compare(last, now, "edition "+last.Edition, "this site")
+		return changes.Compare(last, now(), "edition "+last.Edition, "this site")
 	}
 }

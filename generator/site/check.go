@@ -56,7 +56,7 @@ func (s *site) checkScript() []byte {
 func (s *site) stateOf(r *material.Record) stateNow {
 	n := stateNow{Name: r.Name, Revision: r.Revision, Fingerprint: r.Fingerprint, Status: or(string(r.Status), string(material.Draft)),
 		Replaced: r.ReplacedBy, Reason: r.WithdrawnReason, Past: []statePast{}}
-	if s.in.History == nil {
+	if s.in.History == nil || !s.in.HasEditions {
 		return n
 	}
 	entries := s.in.History(r.ID)

@@ -32,9 +32,10 @@ type Input struct {
 	Answer func(question, written, materialID string) (text, note string, ok bool)
 	// Editions, Changes and History tell what former statements said; nil
 	// where nobody asks.
-	Editions func() []changes.Row
-	Changes  func() *changes.Report // from the newest edition to now, nil when there is none
-	History  func(materialID string) []changes.Entry
+	HasEditions bool
+	Editions    func() []changes.Row
+	Changes     func() *changes.Report // from the newest edition to now, nil when there is none
+	History     func(materialID string) []changes.Entry
 }
 
 // A File is a file of one material for other programs, or why there is none;

@@ -33,6 +33,7 @@ func inputOf(lib *library.Library) *Input {
 	editions, findings := changes.Editions(lib)
 	in.Findings = append(in.Findings, findings...)
 	now := changes.Freeze(lib, in.Outcomes, "")
+	in.HasEditions = len(editions) > 0
 	in.Editions = func() []changes.Row { return changes.Rows(editions) }
 	in.History = func(id string) []changes.Entry {
 		return changes.History(append(append([]*changes.Statement{}, editions...), now), id)
