@@ -9,6 +9,7 @@ import (
 	"path/filepath"
 	"runtime"
 	"strconv"
+	"sync"
 	"syscall"
 
 	"github.com/spf13/cobra"
@@ -19,6 +20,8 @@ import (
 	"ohmfolio/generator/library"
 	"ohmfolio/generator/output"
 	"ohmfolio/generator/place"
+	"ohmfolio/generator/site"
+	"ohmfolio/generator/topics"
 )
 
 func (s *session) follow() *cobra.Command {
@@ -41,10 +44,11 @@ It ends with Ctrl-C.`,
 // following is the reference as the live view holds it between two saves.
 type following struct {
 	*session
-	lib      *library.Library
-	outcomes []examine.Judged
-	more     []place.Finding // of the studies
-	findings []place.Finding // as they were judged last
+	lib    *library.Library
+	topics []topics.Topic
+
+	mu       sync.Mutex
+	findings []place.Finding // as they were judged last, for the page of review
 }
 
 func (s *session) runFollow(port int, browser bool) error {
@@ -58,8 +62,8 @@ func (s *session) runFollow(port int, browser bool) error {
 	if err != nil {
 		return err
 	}
-	f := &following{session: s}
-	v, err := follow.Start(follow.Options{Folder: folder, Port: port, Build: f.build, Judge: f.judge,
+	f := &following{session: s, topics: allTopics()}
+	v, err := follow.Start(follow.Options{Folder: folder, Port: port, Build: f.build,
 		Log: func(text string) { fmt.Fprintln(s.err, text) }})
 	if err != nil {
 		return err
@@ -85,24 +89,30 @@ func (f *following) build(changed map[string]bool) (*follow.View, error) {
 		return nil, err
 	}
 	f.lib = lib
-	f.outcomes, f.more = judged(lib)
-	list, err := Outputs(lib, f.outcomes, f.findings, themeOf(f.folder))
+	outcomes, more := judged(lib)
+	f.mu.Lock()
+	findings := f.findings
+	f.mu.Unlock()
+	list, err := outputsOf(&site.Input{Library: lib, Outcomes: byDocument(outcomes), Findings: findings, Theme: themeOf(f.folder), Topics: f.topics, Live: true}, outcomes)
 	if err != nil {
 		return nil, err
 	}
-	v := &follow.View{Outputs: make(map[string]output.Output, len(list))}
+	v := &follow.View{Outputs: make(map[string]output.Output, len(list)), Judge: func() []follow.Finding { return f.judge(lib, outcomes, more) }}
 	for _, x := range list {
 		v.Outputs[x.Path] = x
 	}
 	return v, nil
 }
 
-// judge holds the reference that was built last against every rule.
-func (f *following) judge() []follow.Finding {
-	more := append(append([]place.Finding{}, f.more...), changes.Examine(f.lib)...)
-	f.findings = examine.Run(f.lib, f.outcomes, examine.Options{Parallel: runtime.GOMAXPROCS(0), More: more})
-	list := make([]follow.Finding, 0, len(f.findings))
-	for _, x := range f.findings {
+// judge holds one reading of the reference against every rule.
+func (f *following) judge(lib *library.Library, outcomes []examine.Judged, more []place.Finding) []follow.Finding {
+	more = append(append([]place.Finding{}, more...), changes.Examine(lib)...)
+	findings := examine.Run(lib, outcomes, examine.Options{Parallel: runtime.GOMAXPROCS(0), More: more})
+	f.mu.Lock()
+	f.findings = findings
+	f.mu.Unlock()
+	list := make([]follow.Finding, 0, len(findings))
+	for _, x := range findings {
 		at := x.Position.File
 		if x.Position.Line > 0 {
 			at += ":" + strconv.Itoa(x.Position.Line)

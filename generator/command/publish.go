@@ -216,7 +216,12 @@ func (s *session) write(lib *library.Library, outcomes []examine.Judged, finding
 
 // Outputs joins the pages and the data files of a reference.
 func Outputs(lib *library.Library, outcomes []examine.Judged, findings []place.Finding, theme fs.FS) ([]output.Output, error) {
-	in := &site.Input{Library: lib, Outcomes: byDocument(outcomes), Findings: findings, Theme: theme, Topics: allTopics()}
+	return outputsOf(&site.Input{Library: lib, Outcomes: byDocument(outcomes), Findings: findings, Theme: theme, Topics: allTopics()}, outcomes)
+}
+
+// outputsOf joins them for an input of the pages.
+func outputsOf(in *site.Input, outcomes []examine.Judged) ([]output.Output, error) {
+	lib := in.Library
 	now := sync.OnceValue(func() *changes.Statement { return changes.Freeze(lib, in.Outcomes, "") })
 	addHistory(in, lib, now)
 	in.Statement = func(r *material.Record) *statement.Statement { return statement.Of(lib, r) }

@@ -25,6 +25,9 @@ import (
 type View struct {
 	Outputs  map[string]output.Output
 	Findings []Finding
+	// Judge tells the findings; it may take longer than building, and readers
+	// see the page before. Views are judged one after another.
+	Judge func() []Finding
 }
 
 // Finding is one finding for the strip at the foot.
@@ -42,9 +45,6 @@ type Options struct {
 	// Build reads the reference again; changed are the files that changed below
 	// Folder, nil for the first time and when nobody knows.
 	Build func(changed map[string]bool) (*View, error)
-	// Judge tells the findings of the reference that was built last; it may take
-	// longer than Build, and readers see the page before.
-	Judge func() []Finding
 	// Log gets one line for each thing worth saying.
 	Log func(text string)
 }
@@ -62,6 +62,9 @@ type Server struct {
 	listener net.Listener
 	http     *http.Server
 	hosts    map[string]bool // Host headers that are ours
+
+	judging sync.WaitGroup
+	turn    sync.Mutex // of judging
 
 	mu      sync.Mutex
 	view    *View
@@ -125,6 +128,7 @@ func (s *Server) Serve(ctx context.Context) error {
 		}
 	}
 	s.bump() // lets pages that wait go
+	s.judging.Wait()
 	stop, done := context.WithTimeout(context.Background(), 2*time.Second)
 	defer done()
 	if err := s.http.Shutdown(stop); err != nil {
@@ -156,14 +160,36 @@ func (s *Server) rebuild(changed map[string]bool) {
 	}
 	s.mu.Unlock()
 	s.bump()
-	if err == nil && s.o.Judge != nil {
-		findings := s.o.Judge()
-		s.mu.Lock()
-		s.view.Findings = findings
-		s.mu.Unlock()
-		s.bump()
+	switch {
+	case err != nil || v.Judge == nil:
+		s.say()
+	default:
+		s.judging.Add(1)
+		go s.judge(v)
 	}
-	s.say()
+}
+
+// judge fills in the findings of a view, unless a newer one stands already.
+func (s *Server) judge(v *View) {
+	defer s.judging.Done()
+	s.turn.Lock()
+	defer s.turn.Unlock()
+	s.mu.Lock()
+	old := s.view != v
+	s.mu.Unlock()
+	if old {
+		return
+	}
+	findings := v.Judge()
+	s.mu.Lock()
+	if old = s.view != v || s.failure != ""; !old {
+		v.Findings = findings
+	}
+	s.mu.Unlock()
+	if !old {
+		s.bump()
+		s.say()
+	}
 }
 
 func (s *Server) say() {

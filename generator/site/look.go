@@ -57,7 +57,7 @@ var scripts = []struct {
 const unitTable = "unit-table"
 
 // loadLook takes the theme and the data scripts by name.
-func loadLook(theme fs.FS, data map[string][]byte) (*look, error) {
+func loadLook(theme fs.FS, data map[string]func() []byte, live bool) (*look, error) {
 	l := &look{scripts: map[string]string{}, templates: template.New("").Funcs(helpers)}
 	for _, name := range templateNames {
 		text, err := fs.ReadFile(theme, name+".tmpl")
@@ -95,7 +95,11 @@ func loadLook(theme fs.FS, data map[string][]byte) (*look, error) {
 		l.scripts[file.name] = l.add(file.name, text)
 	}
 	for _, name := range slices.Sorted(maps.Keys(data)) {
-		l.scripts[name] = l.add("data/"+name, data[name])
+		if live {
+			l.scripts[name] = l.later("data/"+name, data[name])
+			continue
+		}
+		l.scripts[name] = l.add("data/"+name, data[name]())
 	}
 	return l, nil
 }
@@ -168,6 +172,13 @@ func (l *look) add(name string, text []byte) string {
 	hashed := strings.TrimSuffix(name, ending) + "." + hex.EncodeToString(sum[:4]) + ending
 	l.files = append(l.files, output.Output{Path: hashed, Write: func(w *bytes.Buffer) error { w.Write(text); return nil }})
 	return hashed
+}
+
+// later keeps a file under its plain name and makes it when somebody asks: the
+// live view shows one page, and need not list the whole reference for it.
+func (l *look) later(name string, text func() []byte) string {
+	l.files = append(l.files, output.Output{Path: name, Write: func(w *bytes.Buffer) error { w.Write(text()); return nil }})
+	return name
 }
 
 func (l *look) outputs() []output.Output { return l.files }

@@ -33,6 +33,7 @@ type Input struct {
 	// Editions, Changes and History tell what former statements said; nil
 	// where nobody asks.
 	HasEditions bool
+	Live        bool // rendered when asked for, and never published: data scripts have plain names
 	Editions    func() []changes.Row
 	Changes     func() *changes.Report // from the newest edition to now, nil when there is none
 	History     func(materialID string) []changes.Entry
@@ -47,8 +48,8 @@ type File struct{ For, Path, Refused string }
 func Outputs(in *Input) ([]output.Output, error) {
 	s := &site{in: in, units: statement.UnitsOf(in.Library)}
 	var err error
-	data := map[string][]byte{"list.js": s.listScript(), "find-index.js": s.findScript(), "check-data.js": s.checkScript()}
-	if s.look, err = loadLook(in.Theme, data); err != nil {
+	data := map[string]func() []byte{"list.js": s.listScript, "find-index.js": s.findScript, "check-data.js": s.checkScript}
+	if s.look, err = loadLook(in.Theme, data, in.Live); err != nil {
 		return nil, err
 	}
 	s.used = usedBy(in)
