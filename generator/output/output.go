@@ -11,8 +11,10 @@ import (
 	"crypto/sha256"
 	"encoding/hex"
 	"fmt"
+	"io/fs"
 	"os"
 	"path/filepath"
+	"regexp"
 	"sort"
 	"strings"
 	"sync"
@@ -29,6 +31,8 @@ type Output struct {
 type Options struct {
 	Parallel int                   // renderers at once, at least 1
 	Progress func(done, total int) // nil for none; called by several goroutines
+
+	disk *disk // nil for the real one
 }
 
 // Result counts what was done.
@@ -51,12 +55,19 @@ func Publish(dir string, list []Output, o Options) (Result, error) {
 		return Result{}, err
 	}
 	defer held.release()
-	old, err := readMarker(dir)
+	old, retired, err := readMarker(dir)
 	if err != nil {
 		return Result{}, err
 	}
-	p := &publication{dir: dir, list: list, old: old, sums: make([]string, len(list)), sizes: make([]int64, len(list)), temps: make([]string, len(list)), o: o}
-	p.fresh = len(old) == 0
+	p := &publication{dir: dir, list: list, old: old, retired: retired, disk: o.onDisk(), sums: make([]string, len(list)), sizes: make([]int64, len(list)), temps: make([]string, len(list)), o: o}
+	if old == nil { // the folder is ours from here on, whatever happens to this run
+		if err := p.keepMarker(marker{Note: markerNote, Files: map[string]string{}}); err != nil {
+			return Result{}, err
+		}
+	}
+	if held.left {
+		p.sweep()
+	}
 	if err := p.makeFolders(); err != nil {
 		return Result{}, err
 	}
@@ -76,7 +87,10 @@ type publication struct {
 	sizes []int64
 	temps []string // name of the temporary file, "" when nothing is to be replaced
 	o     Options
-	fresh bool // nothing of ours is there yet
+	disk  disk
+
+	retired map[string]bool // kept one publication longer by the last run
+	resting []string        // kept one publication longer by this one
 
 	mu   sync.Mutex
 	done int
@@ -151,10 +165,10 @@ func (p *publication) renderOne(i int, buf *bytes.Buffer) error {
 		return nil
 	}
 	temp := target + tempSuffix
-	if err := os.WriteFile(temp, buf.Bytes(), 0o644); err != nil {
+	p.temps[i] = temp // known before it is there: a disk may fill up in the middle of it
+	if err := p.disk.write(temp, buf.Bytes()); err != nil {
 		return err
 	}
-	p.temps[i] = temp
 	p.step()
 	return nil
 }
@@ -186,9 +200,20 @@ func (p *publication) discard() {
 	}
 }
 
-// finish puts the files in place: new ones first, so that no link leads
+// sweep removes the temporary files of a run that was killed; their ending is
+// ours alone.
+func (p *publication) sweep() {
+	filepath.WalkDir(p.dir, func(name string, d fs.DirEntry, err error) error {
+		if err == nil && !d.IsDir() && strings.HasSuffix(name, tempSuffix) {
+			os.Remove(name)
+		}
+		return nil
+	})
+}
+
+// finish puts the files in place: all new ones first, so that no link leads
 // nowhere, then replaced ones, then pages at the top, which list the others,
-// then removals, then the marker.
+// the index last, then removals, then the marker.
 func (p *publication) finish() (Result, error) {
 	r := Result{Files: len(p.list)}
 	order := make([]int, 0, len(p.list))
@@ -204,7 +229,7 @@ func (p *publication) finish() (Result, error) {
 		return r, err
 	}
 	for _, i := range order {
-		if err := os.Rename(p.temps[i], strings.TrimSuffix(p.temps[i], tempSuffix)); err != nil {
+		if err := p.disk.rename(p.temps[i], strings.TrimSuffix(p.temps[i], tempSuffix)); err != nil {
 			p.discard()
 			return r, err
 		}
@@ -223,22 +248,35 @@ func (p *publication) finish() (Result, error) {
 	return r, nil
 }
 
+// rank is the place of an output in the order of writing: what nobody links to
+// yet, first what pages need, then pages; then what readers see already.
 func (p *publication) rank(i int) int {
 	path := p.list[i].Path
 	_, existed := p.old[path]
+	page, top := strings.HasSuffix(path, ".html"), !strings.Contains(path, "/")
 	switch {
-	case !existed && strings.Contains(path, "/"):
+	case path == "index.html":
+		return 6
+	case !existed && !page:
 		return 0
-	case strings.Contains(path, "/"):
+	case !existed && !top:
 		return 1
 	case !existed:
 		return 2
+	case !page:
+		return 3
+	case !top:
+		return 4
 	}
-	return 3
+	return 5
 }
 
+// hashed is a name that carries the hash of its content: pages of the last
+// publication, still open somewhere, ask for it by that name.
+var hashed = regexp.MustCompile(`\.[0-9a-f]{8}\.(css|js|svg)$`)
+
 // removeStale removes what an earlier run wrote and this one did not, and the
-// folders that are empty then.
+// folders that are empty then. Style and scripts stay one publication longer.
 func (p *publication) removeStale() (int, error) {
 	now := map[string]bool{}
 	for _, out := range p.list {
@@ -246,18 +284,23 @@ func (p *publication) removeStale() (int, error) {
 	}
 	var stale []string
 	for path := range p.old {
-		if !now[path] {
+		switch {
+		case now[path]:
+		case hashed.MatchString(path) && !p.retired[path]:
+			p.resting = append(p.resting, path)
+		default:
 			stale = append(stale, path)
 		}
 	}
 	sort.Strings(stale)
-	for _, path := range stale {
+	sort.Strings(p.resting)
+	for n, path := range stale {
 		full := filepath.Join(p.dir, filepath.FromSlash(path))
 		if err := os.Remove(full); err != nil && !os.IsNotExist(err) {
-			return 0, err
+			return n, err
 		}
-		if folder := filepath.Dir(full); folder != p.dir {
-			os.Remove(folder) // only when it is empty
+		for folder := filepath.Dir(full); folder != p.dir && os.Remove(folder) == nil; { // only when it is empty
+			folder = filepath.Dir(folder)
 		}
 	}
 	return len(stale), nil

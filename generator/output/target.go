@@ -43,7 +43,10 @@ func checkPaths(list []Output) error {
 }
 
 // lock is a held folder.
-type lock struct{ path string }
+type lock struct {
+	path string
+	left bool // an earlier run was killed here
+}
 
 func (l lock) release() { os.Remove(l.path) }
 
@@ -77,7 +80,7 @@ func ours(dir string) error {
 		switch e.Name() {
 		case Marker:
 			return nil
-		case ".gitignore", lockName:
+		case ".gitignore", lockName, Marker + tempSuffix: // the last from a run that was killed
 		default:
 			other = e.Name()
 		}
@@ -89,11 +92,12 @@ func ours(dir string) error {
 }
 
 func hold(name, dir string) (lock, error) {
+	left := false
 	for range 2 {
 		f, err := os.OpenFile(name, os.O_WRONLY|os.O_CREATE|os.O_EXCL, 0o644)
 		if err == nil {
 			_, err = f.WriteString(strconv.Itoa(os.Getpid()) + "\n")
-			return lock{name}, errors.Join(err, f.Close())
+			return lock{name, left}, errors.Join(err, f.Close())
 		}
 		if !errors.Is(err, fs.ErrExist) {
 			return lock{}, err
@@ -103,6 +107,7 @@ func hold(name, dir string) (lock, error) {
 			return lock{}, fmt.Errorf("%s is being written by process %d; wait for it to end", dir, pid)
 		}
 		os.Remove(name) // left by a run that was killed
+		left = true
 	}
 	return lock{}, fmt.Errorf("%s is being written by another process; wait for it to end", dir)
 }
@@ -120,28 +125,34 @@ func holder(name string) int {
 type marker struct {
 	Note  string            `json:"note"`
 	Files map[string]string `json:"files"` // path → SHA-256
+	// Retired are those that no page asks for any more; they go next time.
+	Retired []string `json:"retired,omitempty"`
 }
 
 const markerNote = "Written by ohmfolio. The files listed here are replaced and removed by the next publication; others are never touched."
 
-func readMarker(dir string) (map[string]string, error) {
+func readMarker(dir string) (files map[string]string, retired map[string]bool, err error) {
 	text, err := os.ReadFile(filepath.Join(dir, Marker))
 	if errors.Is(err, fs.ErrNotExist) {
-		return nil, nil
+		return nil, nil, nil
 	}
 	if err != nil {
-		return nil, err
+		return nil, nil, err
 	}
 	var m marker
-	if json.Unmarshal(text, &m) != nil {
-		return map[string]string{}, nil // damaged: write everything again, remove nothing
+	if json.Unmarshal(text, &m) != nil || m.Files == nil {
+		return map[string]string{}, nil, nil // damaged: write everything again, remove nothing
 	}
 	for p := range m.Files { // never trust a path outside the folder
 		if path.Clean(p) != p || path.IsAbs(p) || strings.HasPrefix(p, "..") {
 			delete(m.Files, p)
 		}
 	}
-	return m.Files, nil
+	retired = map[string]bool{}
+	for _, p := range m.Retired {
+		retired[p] = true
+	}
+	return m.Files, retired, nil
 }
 
 // writeMarker writes the bookkeeping. Before the files are put in place it
@@ -160,21 +171,34 @@ func (p *publication) writeMarker(before bool) error {
 			m.Files[o.Path] = ""
 		}
 	}
+	if !before {
+		for _, path := range p.resting {
+			m.Files[path] = p.old[path]
+		}
+		m.Retired = p.resting
+	}
+	return p.keepMarker(m)
+}
+
+func (p *publication) keepMarker(m marker) error {
 	text, err := json.MarshalIndent(m, "", " ")
 	if err != nil {
 		return err
 	}
 	name := filepath.Join(p.dir, Marker)
-	if err := os.WriteFile(name+tempSuffix, append(text, '\n'), 0o644); err != nil {
-		os.Remove(name + tempSuffix)
-		return err
+	err = p.disk.write(name+tempSuffix, append(text, '\n'))
+	if err == nil {
+		err = p.disk.rename(name+tempSuffix, name)
 	}
-	return os.Rename(name+tempSuffix, name)
+	if err != nil {
+		os.Remove(name + tempSuffix)
+	}
+	return err
 }
 
 // Written lists the files that the marker of dir names, sorted.
 func Written(dir string) ([]string, error) {
-	files, err := readMarker(dir)
+	files, _, err := readMarker(dir)
 	var list []string
 	for p := range files {
 		list = append(list, p)
