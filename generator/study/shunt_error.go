@@ -156,7 +156,7 @@ func greatestShare(alloy curve.Curve, alpha, reference, lo, hi, bound float64) f
 		return math.Max(math.Abs(e.Min-1), math.Abs(e.Max-1))
 	}
 	a, b := 0.0, 1.0
-	for range 40 {
+	for range 26 {
 		x, y := a+(b-a)*0.382, a+(b-a)*0.618
 		if worst(x) <= worst(y) {
 			b = y
@@ -175,7 +175,7 @@ func greatestShare(alloy curve.Curve, alpha, reference, lo, hi, bound float64) f
 		return 1
 	}
 	a, b = least, 1
-	for range 40 {
+	for range 26 {
 		if mid := (a + b) / 2; worst(mid) <= bound {
 			a = mid
 		} else {

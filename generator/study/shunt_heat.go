@@ -72,7 +72,7 @@ func (e *element) endCooled() {
 		return
 	}
 	mean, peak := ends.v, 0.0
-	for range 40 {
+	for range 30 {
 		f := e.factor(mean)
 		if math.IsNaN(f) {
 			e.a.cannot("element temperature: the mean leaves the valid range " + windowText(e.set.Valid.Lo, e.set.Valid.Hi))
