@@ -56,7 +56,7 @@ func (s *site) topic(t topics.Topic) output.Output {
 }
 
 func partTable(p topics.Part) template.HTML {
-	var t tableWriter
+	t := tableWriter{of: p.Title}
 	t.begin("", p.Heads, nil)
 	for _, row := range p.Rows { // all text: 1e-8 ohm m is a spelling, no number to stand on the right
 		tag := `th scope="row"`
