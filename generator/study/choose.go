@@ -25,6 +25,7 @@ var chooseKind = Kind{
 		field("form", form.OneOf("strip", "sheet", "foil", "wire", "bar"), "Form of stock that must be recorded.", "strip"),
 		field("thickness", form.Quantity(quantity.Length), "Thickness of stock, a value or limits.", "0.5 mm to 1 mm"),
 		field("diameter", form.Quantity(quantity.Length), "Diameter of stock, a value or limits.", "0.4 mm"),
+		field("declared", form.List(form.Text), "Restricted substances that a declaration of the record must hold within their limit.", "[lead, cadmium]"),
 		field("status", form.OneOf("released", "any"), "Whether only released records may be chosen; released when it is missing.", "released"),
 	},
 	Numbers: withChange(
@@ -118,6 +119,7 @@ func (c *choice) judge(r *material.Record) *answer {
 	a.judge()
 	c.state(a)
 	c.stock(a)
+	c.declared(a)
 	margin := math.Inf(1)
 	for _, q := range a.Requirements {
 		switch {
@@ -167,6 +169,24 @@ func (c *choice) stock(a *answer) {
 		verdict, why = CannotBeTold, "stock: none is recorded"
 	}
 	a.condition("stock", wanted, verdict, why)
+}
+
+// declared looks for a declaration of every substance that is asked for; one
+// above its limit fails, a missing one cannot be told.
+func (c *choice) declared(a *answer) {
+	for _, n := range c.block.Get("declared").List() {
+		verdict, why := CannotBeTold, "no declaration of "+n.Text()
+		for _, d := range a.Record.Declarations {
+			switch {
+			case !strings.EqualFold(d.Substance, n.Text()):
+			case d.AboveLimit():
+				verdict, why = Fails, n.Text()+" is declared above its limit"
+			case verdict != Fails:
+				verdict = Holds
+			}
+		}
+		a.condition("declaration", n.Text(), verdict, why)
+	}
 }
 
 func sizeFits(have *quantity.Quantity, want quantity.Quantity) bool {

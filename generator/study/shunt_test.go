@@ -18,6 +18,7 @@ func bench(t testing.TB, name, block string) (*Outcome, []place.Finding) {
 		"materials/sources.yaml": []byte("s: {kind: standard, title: T, number: N, checked: original}\n"),
 		"materials/cumnni.yaml": []byte("name: CuMnNi\nsource: s\nbasis: resistance\nresistivity: 43 µΩ·cm ± 10 %\nreference_temperature: 20 °C\nalpha: 10 ppm/K\nbeta: -0.5 ppm/K²\nvalid_range: -55 °C to 125 °C\nstatus: released\n" +
 			"properties: {thermal_conductivity: {value: 22 W/(m·K), source: s}, emf_to_copper: {value: -1 µV/K, source: s}, density: {value: 8.4 g/cm³, source: s}, specific_heat: {value: 410 J/(kg·K), source: s}, service_temperature: {accuracy: 80 °C, source: s}}\n" +
+			"declarations: [{substance: lead, limit: 0.1 %, greatest: <= 0.005 %, basis: per homogeneous material, document: works declaration, date: 2026-01-01}]\n" +
 			"stock:\n  - {form: strip, thickness: 1 mm, width: 200 mm}\n"),
 		"materials/cuni.yaml": []byte("name: CuNi\nsource: s\nbasis: resistance\nresistivity: 49 µΩ·cm\nreference_temperature: 20 °C\nalpha: 5 ppm/K\nvalid_range: -55 °C to 125 °C\n" +
 			"properties: {emf_to_copper: {value: -40 µV/K, source: s}}\n"),
@@ -246,6 +247,10 @@ func TestChoose(t *testing.T) {
 	o = benched(t, "choose", "window: -40 °C to 85 °C\nstatus: any\nrequire: {emf_to_copper: 5 µV/K, resistivity: \">= 45 µΩ·cm\"}\n")
 	if text := strings.Join(o.Notes, " "); !strings.Contains(text, "“emf to copper” and “resistivity” contradict") {
 		t.Errorf("the pair is not named: %s", text)
+	}
+	o = benched(t, "choose", "window: 0 °C to 60 °C\ndeclared: [Lead, cadmium]\n")
+	if m := of(o, "cumnni"); m.Verdict != CannotBeTold || !strings.Contains(strings.Join(m.Reasons, ";"), "no declaration of cadmium") || strings.Contains(strings.Join(m.Reasons, ";"), "no declaration of Lead") {
+		t.Errorf("declared: %q %v", m.Verdict, m.Reasons)
 	}
 	_, findings := bench(t, "choose", "families: [resistance aloys]\nwindow: 0 °C to 60 °C\n")
 	if len(findings) != 1 || findings[0].Code != "family-unknown" {
