@@ -78,7 +78,7 @@ func archive(w io.Writer, list []Output, parallel int) error {
 			return err
 		}
 	}
-	last := pack(Output{Path: ArchiveSums, Write: func(b *bytes.Buffer) error { b.WriteString(sums.String()); return nil }}, &bytes.Buffer{})
+	last := newPacker().pack(Output{Path: ArchiveSums, Write: func(b *bytes.Buffer) error { b.WriteString(sums.String()); return nil }})
 	if err := last.into(z); err != nil {
 		return err
 	}
@@ -102,12 +102,12 @@ func packAll(list []Output, parallel int) func(yield func(*packed) bool) {
 		stop := make(chan struct{})
 		defer close(stop)
 		slots := make(chan chan *packed, 2*parallel)
-		work := make(chan func(*bytes.Buffer))
+		work := make(chan func(*packer))
 		for range parallel {
 			go func() {
-				var buffer bytes.Buffer
+				packer := newPacker()
 				for f := range work {
-					f(&buffer)
+					f(packer)
 				}
 			}()
 		}
@@ -122,7 +122,7 @@ func packAll(list []Output, parallel int) func(yield func(*packed) bool) {
 					return
 				}
 				select {
-				case work <- func(b *bytes.Buffer) { slot <- pack(o, b) }:
+				case work <- func(p *packer) { slot <- p.pack(o) }:
 				case <-stop:
 					return
 				}
@@ -136,22 +136,34 @@ func packAll(list []Output, parallel int) func(yield func(*packed) bool) {
 	}
 }
 
-func pack(o Output, buffer *bytes.Buffer) *packed {
+// packer has what one worker uses again for every file: a compressor is dear
+// to make.
+type packer struct {
+	text, small bytes.Buffer
+	flate       *flate.Writer
+}
+
+func newPacker() *packer {
+	w, err := flate.NewWriter(nil, flate.DefaultCompression)
+	if err != nil {
+		panic(err) // only for a level that does not exist
+	}
+	return &packer{flate: w}
+}
+
+func (k *packer) pack(o Output) *packed {
 	p := &packed{path: o.Path}
-	buffer.Reset()
-	if p.err = o.Write(buffer); p.err != nil {
+	k.text.Reset()
+	k.small.Reset()
+	if p.err = o.Write(&k.text); p.err != nil {
 		return p
 	}
-	text := buffer.Bytes()
+	text := k.text.Bytes()
 	p.crc, p.size, p.sum = crc32.ChecksumIEEE(text), uint64(len(text)), sha256.Sum256(text)
-	var b bytes.Buffer
-	w, err := flate.NewWriter(&b, flate.DefaultCompression)
-	if err == nil {
-		_, err = w.Write(text)
+	k.flate.Reset(&k.small)
+	if _, p.err = k.flate.Write(text); p.err == nil {
+		p.err = k.flate.Close()
 	}
-	if err == nil {
-		err = w.Close()
-	}
-	p.data, p.err = b.Bytes(), err
+	p.data = bytes.Clone(k.small.Bytes())
 	return p
 }
