@@ -116,11 +116,18 @@ func (a *answer) text(name string) string {
 	doc := a.w.kind.number(name)
 	u := a.w.unit(doc)
 	show := func(si float64) string { return oneText(doc, u, si) }
+	if !s.wide() {
+		if math.IsNaN(s.v) {
+			return show(s.lo)
+		}
+		return show(s.v)
+	}
+	lo, hi := show(s.lo), show(s.hi)
 	switch {
 	case math.IsNaN(s.v):
-		return show(s.lo) + " to " + show(s.hi)
-	case s.wide() && show(s.lo) != show(s.hi):
-		return show(s.v) + " (" + show(s.lo) + " to " + show(s.hi) + ")"
+		return lo + " to " + hi
+	case lo != hi:
+		return show(s.v) + " (" + lo + " to " + hi + ")"
 	}
 	return show(s.v)
 }
@@ -172,16 +179,19 @@ func (w *work) numbersTable(caption string, answers []*answer, names ...string) 
 	if verdicts {
 		t.Heads = append(t.Heads, "verdict")
 	}
-	for _, a := range answers {
-		row := []string{a.Label()}
+	t.Rows, t.Links = make([][]string, len(answers)), make([]string, len(answers))
+	inParallel(len(answers), func(i int) {
+		a := answers[i]
+		row := make([]string, 1, len(kept)+2)
+		row[0] = a.Label()
 		for _, name := range kept {
 			row = append(row, a.cell(name))
 		}
 		if verdicts {
 			row = append(row, a.Verdict.Shown())
 		}
-		t.Rows, t.Links = append(t.Rows, row), append(t.Links, a.Material)
-	}
+		t.Rows[i], t.Links[i] = row, a.Material
+	})
 	return t
 }
 

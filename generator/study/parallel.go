@@ -13,22 +13,26 @@ import (
 func (w *work) each(records []*material.Record, about func(r *material.Record) []*answer) []*answer {
 	w.houseResistivity()
 	lists := make([][]*answer, len(records))
-	workers := min(runtime.GOMAXPROCS(0), len(records)/8)
-	var next atomic.Int64
-	take := func() {
-		for i := int(next.Add(1)) - 1; i < len(records); i = int(next.Add(1)) - 1 {
-			lists[i] = about(records[i])
-		}
-	}
-	var wait sync.WaitGroup
-	for range workers - 1 {
-		wait.Go(take)
-	}
-	take()
-	wait.Wait()
+	inParallel(len(records), func(i int) { lists[i] = about(records[i]) })
 	var answers []*answer
 	for _, list := range lists {
 		answers = append(answers, list...)
 	}
 	return answers
+}
+
+// inParallel does n things, several at a time when they are many.
+func inParallel(n int, do func(i int)) {
+	var next atomic.Int64
+	take := func() {
+		for i := int(next.Add(1)) - 1; i < n; i = int(next.Add(1)) - 1 {
+			do(i)
+		}
+	}
+	var wait sync.WaitGroup
+	for range min(runtime.GOMAXPROCS(0), n/8) - 1 {
+		wait.Go(take)
+	}
+	take()
+	wait.Wait()
 }
